@@ -1,0 +1,105 @@
+/** What the window and the command line are given: plain data, no classes, ready for any wire. */
+import type { Building, LevelBook, GivenLevel } from '../model/building.ts'
+import type { Findings } from '../model/findings.ts'
+
+export type RoundState = 'draft' | 'accepted' | 'superseded'
+
+/** A round with its history. Accepted rounds are also in `ProjectView.building.survey.rounds`. */
+export interface RoundView {
+  id: string
+  date: string
+  state: RoundState
+  levels?: GivenLevel[]
+  book?: LevelBook
+  observer?: string
+  instrument?: string
+  weather?: string
+  note?: string
+  accepted_at?: string
+  accepted_by?: string
+  /** Counted from 1; a correction is the next version of its round. */
+  version: number
+  /** Why this version replaced the one before. */
+  reason?: string
+}
+
+export interface ProjectView {
+  /** Where the project file is. */
+  path: string
+  /** The description and the accepted rounds in force. */
+  building: Building
+  /** All versions of all rounds, drafts included, by date. */
+  rounds: RoundView[]
+  /** Names of what undo and redo would do; null where there is nothing. */
+  undo: string | null
+  redo: string | null
+  /** Counts every write; tells the window whether what it shows is current. */
+  revision: number
+}
+
+export interface IssuedReportView {
+  /** Running number, from 1. */
+  number: number
+  /** Number and revision as printed: "TR-014/3 rev A" or "3 rev A" without a reference. */
+  label: string
+  round: string
+  issued_at: string
+  surveyed_by: string
+  assessed_by: string
+  reviewer: string
+  pages: number
+  sha256: string
+}
+
+export interface ReportNames {
+  surveyed_by: string
+  assessed_by: string
+  /** The licensed engineer who is to review and sign. */
+  reviewer: string
+}
+
+export interface ReportOptions extends ReportNames {
+  round: string
+  paper: 'A4' | 'Letter'
+}
+
+export interface PdfView {
+  /** Base64 of the PDF's bytes. */
+  pdf: string
+  pages: number
+}
+
+export interface VerifyRow {
+  source: string
+  check: string
+  expected: number
+  found: number
+  unit: string
+  tolerance: number
+  agrees: boolean
+}
+
+export interface ImportedView {
+  added: string[]
+  /** How each column of a readings table was read. */
+  columns?: Record<string, string>
+}
+
+export interface FolderView {
+  folder: string
+  parent: string | null
+  folders: string[]
+  /** Project files and building files in it. */
+  files: string[]
+}
+
+export interface AboutView {
+  version: string
+  /** 'electron' or 'browser': which shell serves the window. */
+  shell: 'electron' | 'browser'
+  home: string
+  /** Project opened by the command line, where there is one. */
+  opened: string | null
+}
+
+export type { Findings }
