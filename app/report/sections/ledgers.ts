@@ -1,0 +1,111 @@
+/** The tables of supports, spans and members, worst first. */
+import type { Content, TableCell } from 'pdfmake/interfaces'
+import { byWorst, type MemberFinding, type SpanFinding } from '../../model/findings.ts'
+import { millimetres, moment, percent, ratio } from '../../model/numbers.ts'
+import type { ReportInput } from '../input.ts'
+import { statusCell, table } from '../style.ts'
+import { severity } from './drawings.ts'
+
+export function ledgers(input: ReportInput): Content[] {
+  return [
+    { text: 'Supports', style: 'heading', pageBreak: 'before' },
+    supports(input),
+    { text: 'Spans', style: 'heading' },
+    spans(input),
+    { text: 'Members', style: 'heading' },
+    members(input),
+    {
+      text: 'Moments at the from and to end induced by settlement alone, clockwise positive; existing moments from the loads as combined. Fraction: induced bending over capacity of its sense. Utilisation: induced and existing together over capacity, at its worst along the member.',
+      style: 'quiet',
+    },
+  ]
+}
+
+function supports({ findings, z }: ReportInput): Content {
+  const rows = [...findings.supports].sort((a, b) => b.settlement_mm - a.settlement_mm)
+  return table(
+    [
+      { heading: 'support', width: '*' },
+      { heading: 'settlement, mm', width: 90, align: 'right' },
+      { heading: '±, mm', width: 50, align: 'right' },
+      { heading: 'significant', width: 70 },
+      { heading: 'measured', width: 110 },
+    ],
+    rows.map((s) => [
+      s.support,
+      millimetres(s.settlement_mm, 1),
+      millimetres(z * s.sd_mm, 1),
+      s.significant ? 'yes' : 'no',
+      s.estimated ? 'no: estimated' : 'yes',
+    ]),
+  )
+}
+
+function spans({ findings, z }: ReportInput): Content {
+  const rows: { line: string; span: SpanFinding }[] = findings.frame_lines.flatMap((line) =>
+    line.spans.map((span) => ({ line: line.id, span })),
+  )
+  rows.sort(
+    (a, b) =>
+      byWorst(a.span.status, b.span.status) ||
+      Math.abs(b.span.angular_distortion_rad) - Math.abs(a.span.angular_distortion_rad),
+  )
+  return table(
+    [
+      { heading: 'line', width: 45 },
+      { heading: 'span', width: '*' },
+      { heading: 'length, m', width: 50, align: 'right' },
+      { heading: 'differential, mm', width: 70, align: 'right' },
+      { heading: 'angular distortion', width: 75, align: 'right' },
+      { heading: '±, 1/1000', width: 50, align: 'right' },
+      { heading: 'status', width: 95 },
+    ],
+    rows.map(({ line, span }): TableCell[] => [
+      line,
+      `${span.from} to ${span.to}`,
+      span.length_m.toFixed(2),
+      millimetres(span.differential_mm, 1),
+      ratio(span.angular_distortion_rad),
+      (z * span.sd_rad * 1000).toFixed(2),
+      statusCell(span.status, span.certainty),
+    ]),
+  )
+}
+
+function members({ findings, z }: ReportInput): Content {
+  const rows: { line: string; member: MemberFinding }[] = findings.frame_lines.flatMap((line) =>
+    line.members.map((member) => ({ line: line.id, member })),
+  )
+  rows.sort((a, b) => byWorst(a.member.status, b.member.status) || severity(b.member) - severity(a.member))
+  const loaded = rows.some(({ member }) => member.existing_from_kNm !== undefined)
+  return table(
+    [
+      { heading: 'line', width: 30 },
+      { heading: 'member', width: '*' },
+      { heading: 'from, kNm', width: 68, align: 'right' },
+      { heading: 'to, kNm', width: 68, align: 'right' },
+      ...(loaded ? [{ heading: 'existing, kNm', width: 66, align: 'right' as const }] : []),
+      { heading: 'fraction', width: 58, align: 'right' },
+      { heading: 'utilisation', width: 45, align: 'right' },
+      { heading: 'status', width: 84 },
+    ],
+    rows.map(({ line, member }): TableCell[] => [
+      line,
+      member.member,
+      `${moment(member.moment_from_kNm)} ± ${moment(z * member.sd_from_kNm)}`,
+      `${moment(member.moment_to_kNm)} ± ${moment(z * member.sd_to_kNm)}`,
+      ...(loaded
+        ? [
+            member.existing_from_kNm === undefined
+              ? ''
+              : `${moment(member.existing_from_kNm)}, ${moment(member.existing_to_kNm ?? 0)}`,
+          ]
+        : []),
+      member.induced_fraction === undefined
+        ? 'no capacity'
+        : `${percent(member.induced_fraction)} ± ${percent(z * (member.sd_induced_fraction ?? 0))}`,
+      member.utilisation === undefined ? '' : percent(member.utilisation),
+      statusCell(member.status, member.status === 'none' ? undefined : member.certainty),
+    ]),
+  )
+}
