@@ -18,15 +18,103 @@ export function shown(value: unknown): string {
 const NOTHING_WRITTEN = 'Nothing was written.'
 
 export const catalogue = {
-  'request.unknown': {
-    what: (p) => `There is no request named ${shown(p.value)}.`,
+  'argument.missing': {
+    what: (p) => `${shown(p.value)} needs ${p.path ?? 'a file'}.`,
     kept: NOTHING_WRITTEN,
-    todo: () => 'Use one of the requests of this version.',
+    todo: (p) => `Write it as: ${p.detail?.usage ?? 'levelstead --help'}`,
+  },
+  'argument.surplus': {
+    what: (p) => `${shown(p.value)} is one argument too many.`,
+    kept: NOTHING_WRITTEN,
+    todo: (p) => `Write it as: ${p.detail?.usage ?? 'levelstead --help'}`,
+  },
+  'command.unknown': {
+    what: (p) =>
+      `There is no command ${shown(p.value)}${p.detail?.nearest ? `; the nearest is ${shown(p.detail.nearest)}` : ''}.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Ask for the list of commands with --help.',
+  },
+  'disk.full': {
+    what: (p) => `There is no room left to write ${shown(p.file)}.`,
+    kept: 'What stood under that name is as it was.',
+    todo: () => 'Free some space, or write to another disk.',
+  },
+  'file.busy': {
+    what: (p) => `${shown(p.file)} is in use by another program.`,
+    kept: 'It is as it was.',
+    todo: () =>
+      'Close it there (a viewer, a virus scanner or a program that keeps folders in step may hold it), then try again.',
+  },
+  'file.exists': {
+    what: (p) => `${shown(p.file)} exists already.`,
+    kept: 'It is as it was.',
+    todo: () => 'Choose another name, or move that file away first.',
+  },
+  'file.folder': {
+    what: (p) => `${shown(p.file)} is a folder, not a file.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Name a file.',
+  },
+  'file.large': {
+    what: (p) => `${shown(p.file)} is too large to be one of ours: ${shown(p.value)} bytes.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Check that this is the right file.',
+  },
+  'file.missing': {
+    what: (p) => `There is no file ${shown(p.file)}.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Check the name and the folder.',
+  },
+  'file.unreadable': {
+    what: (p) => `${shown(p.file)} cannot be read${p.detail?.reason ? ` (${String(p.detail.reason)})` : ''}.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Check that you may read it and that its disk is there.',
+  },
+  'file.unwritable': {
+    what: (p) => `${shown(p.file)} cannot be written${p.detail?.reason ? ` (${String(p.detail.reason)})` : ''}.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Check that you may write there, or choose another folder.',
+  },
+  'folder.missing': {
+    what: (p) => `The folder of ${shown(p.file)} does not exist.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Make the folder first, or choose another.',
+  },
+  'option.repeated': {
+    what: (p) => `The option ${String(p.value)} is given twice.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Give it once.',
+  },
+  'option.surplus': {
+    what: (p) => `The option ${String(p.path)} takes no value, and was given ${shown(p.value)}.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Leave the value out.',
+  },
+  'option.unknown': {
+    what: (p) =>
+      `There is no option ${String(p.value)}${p.detail?.nearest ? `; the nearest is ${String(p.detail.nearest)}` : ''}.`,
+    kept: NOTHING_WRITTEN,
+    todo: (p) => `Write it as: ${p.detail?.usage ?? 'levelstead --help'}`,
+  },
+  'option.valueless': {
+    what: (p) => `The option ${String(p.value)} needs a value.`,
+    kept: NOTHING_WRITTEN,
+    todo: (p) => `Write it as: ${p.detail?.usage ?? 'levelstead --help'}`,
+  },
+  'paper.unknown': {
+    what: (p) => `There is no paper ${shown(p.value)}.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Use A4 or Letter.',
   },
   'request.malformed': {
     what: (p) => `The request is not of its form${p.path ? ` at ${p.path}` : ''}.`,
     kept: NOTHING_WRITTEN,
     todo: () => 'Send what the request takes.',
+  },
+  'request.unknown': {
+    what: (p) => `There is no request named ${shown(p.value)}.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Use one of the requests of this version.',
   },
   'work.stopped': {
     what: () => 'The work was stopped.',
