@@ -15,6 +15,12 @@ export function shown(value: unknown): string {
   return text.length > 60 ? `${text.slice(0, 57)}...` : text
 }
 
+/** Names in a sentence: the first few, and how many more. */
+function list(names: unknown): string {
+  const all = Array.isArray(names) ? names.map(String) : []
+  return all.length > 4 ? `${all.slice(0, 3).join(', ')} and ${all.length - 3} more` : all.join(', ')
+}
+
 const NOTHING_WRITTEN = 'Nothing was written.'
 
 export const catalogue = {
@@ -80,6 +86,32 @@ export const catalogue = {
     kept: NOTHING_WRITTEN,
     todo: () => 'Make the folder first, or choose another.',
   },
+  'grid.large': {
+    what: (p) =>
+      `The grid would have ${shown(p.value)} supports; ${p.detail?.most ?? 2000} is the most laid out at once.`,
+    kept: 'The building is as it was.',
+    todo: () => 'Correct the spacings.',
+  },
+  'line.short': {
+    what: (p) => `Frame line ${shown(p.element?.id)} has fewer than two supports.`,
+    kept: 'The building is as it was.',
+    todo: () => 'Pick two supports or more.',
+  },
+  'line.storeyless': {
+    what: (p) => `Frame line ${shown(p.element?.id)} has no storey.`,
+    kept: 'The building is as it was.',
+    todo: () => 'Give one storey height or more, in metres, as 3.5, 2 x 3.2.',
+  },
+  'name.empty': {
+    what: (p) => `The ${p.element?.kind ?? 'thing'} has no name.`,
+    kept: 'The building is as it was.',
+    todo: () => 'Give it a name.',
+  },
+  'name.taken': {
+    what: (p) => `There is a ${p.element?.kind ?? 'thing'} named ${shown(p.value)} already.`,
+    kept: 'The building is as it was.',
+    todo: () => 'Choose another name.',
+  },
   'option.repeated': {
     what: (p) => `The option ${String(p.value)} is given twice.`,
     kept: NOTHING_WRITTEN,
@@ -106,6 +138,11 @@ export const catalogue = {
     kept: NOTHING_WRITTEN,
     todo: () => 'Use A4 or Letter.',
   },
+  'point.read': {
+    what: (p) => `${shown(p.value)} was read in ${list(p.detail?.rounds)}, so it keeps its name and stays.`,
+    kept: 'The building and its readings are as they were.',
+    todo: () => 'Add another point if the next rounds read a new one.',
+  },
   'request.malformed': {
     what: (p) => `The request is not of its form${p.path ? ` at ${p.path}` : ''}.`,
     kept: NOTHING_WRITTEN,
@@ -115,6 +152,22 @@ export const catalogue = {
     what: (p) => `There is no request named ${shown(p.value)}.`,
     kept: NOTHING_WRITTEN,
     todo: () => 'Use one of the requests of this version.',
+  },
+  'section.none': {
+    what: (p) => `Frame line ${shown(p.element?.id)} has no section to give the member.`,
+    kept: 'The building is as it was.',
+    todo: () => 'Add a section first.',
+  },
+  'section.used': {
+    what: (p) => `Section ${shown(p.value)} is that of ${list(p.detail?.members)}.`,
+    kept: 'The building is as it was.',
+    todo: () => 'Give those members another section first.',
+  },
+  'support.read': {
+    what: (p) =>
+      `Support ${shown(p.value)} carries ${p.detail?.point ?? 'a stud'}, which was read in ${list(p.detail?.rounds)}.`,
+    kept: 'The building and its readings are as they were.',
+    todo: () => 'Leave the support; strike out the members that stand on it.',
   },
   'work.stopped': {
     what: () => 'The work was stopped.',
