@@ -1,5 +1,5 @@
 /**
- * The order in which nodes are eliminated. Work grows with the square of the profile's row heights, so four
+ * The order in which nodes are eliminated. Work grows with the square of the profile's row heights, so three
  * orders are tried and the cheapest is taken: sweeps storey by storey and bay by bay, and reverse
  * Cuthill-McKee, which also serves frames that are no grid. Nodes without a free movement are left out.
  *
