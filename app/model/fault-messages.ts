@@ -34,6 +34,11 @@ export const catalogue = {
     kept: NOTHING_WRITTEN,
     todo: (p) => `Write it as: ${p.detail?.usage ?? 'levelstead --help'}`,
   },
+  'book.unopened': {
+    what: (p) => `Round ${p.detail?.round}, row ${p.detail?.row}: ${p.detail?.point} is read before any backsight.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Book the backsight with which the first setup begins above it.',
+  },
   'command.unknown': {
     what: (p) =>
       `There is no command ${shown(p.value)}${p.detail?.nearest ? `; the nearest is ${shown(p.detail.nearest)}` : ''}.`,
@@ -86,6 +91,26 @@ export const catalogue = {
     kept: NOTHING_WRITTEN,
     todo: () => 'Make the folder first, or choose another.',
   },
+  'frame.baseless': {
+    what: (p) => `Frame line ${p.detail?.line} stands on support ${shown(p.value)}, which is not described.`,
+    kept: 'The description is as it was.',
+    todo: () => 'Describe that support, or let the node stand on another.',
+  },
+  'frame.mechanism': {
+    what: (p) => `Frame line ${p.detail?.line} can move freely at ${list(p.detail?.nodes)}: it is a mechanism.`,
+    kept: 'The description is as it was.',
+    todo: () => 'Take out a pin, add a member, or fix a base there.',
+  },
+  'frame.unsupported': {
+    what: (p) => `Frame line ${p.detail?.line}: ${list(p.detail?.nodes)} hang on no support.`,
+    kept: 'The description is as it was.',
+    todo: () => 'Join them by members to a support, or take them away.',
+  },
+  'frame.unusable': {
+    what: (p) => `Frame line ${p.detail?.line} cannot be solved: ${shown(p.value)} is not a usable value.`,
+    kept: 'The description is as it was.',
+    todo: () => 'Correct the values of its nodes, supports and bases.',
+  },
   'grid.large': {
     what: (p) =>
       `The grid would have ${shown(p.value)} supports; ${p.detail?.most ?? 2000} is the most laid out at once.`,
@@ -101,6 +126,23 @@ export const catalogue = {
     what: (p) => `Frame line ${shown(p.element?.id)} has no storey.`,
     kept: 'The building is as it was.',
     todo: () => 'Give one storey height or more, in metres, as 3.5, 2 x 3.2.',
+  },
+  'member.incomplete': {
+    what: (p) =>
+      `Member ${p.detail?.member} of frame line ${p.detail?.line} names the ${p.detail?.kind} ${shown(p.value)}, which is not described.`,
+    kept: 'The description is as it was.',
+    todo: (p) => `Describe that ${p.detail?.kind}, or give the member another.`,
+  },
+  'member.lengthless': {
+    what: (p) => `Member ${p.detail?.member} of frame line ${p.detail?.line} has no length.`,
+    kept: 'The description is as it was.',
+    todo: () => 'Move one of its nodes, or take it away.',
+  },
+  'member.unusable': {
+    what: (p) =>
+      `Member ${p.detail?.member} of frame line ${p.detail?.line} cannot be solved: its ${shown(p.value)} is not a usable value.`,
+    kept: 'The description is as it was.',
+    todo: () => 'Correct its section and loads.',
   },
   'name.empty': {
     what: (p) => `The ${p.element?.kind ?? 'thing'} has no name.`,
@@ -153,6 +195,27 @@ export const catalogue = {
     kept: NOTHING_WRITTEN,
     todo: () => 'Use one of the requests of this version.',
   },
+  'round.baseless': {
+    what: (p) => `Round ${p.detail?.round} has no baseline to be counted from.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Choose the round that all settlements are counted from.',
+  },
+  'round.unknown': {
+    what: (p) => `There is no round ${shown(p.value)}.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Name one of the rounds of the building.',
+  },
+  'round.unmeasured': {
+    what: (p) =>
+      `Round ${p.detail?.round} gives the settlement of no support: none of its studs is in the baseline, nor joined to it.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Read at least one stud that the baseline has, or choose another baseline.',
+  },
+  'round.untied': {
+    what: (p) => `In round ${p.element?.id} no chain of readings joins ${list(p.detail?.points)} to a benchmark.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Book the readings that join them, or give the level of a benchmark that was read.',
+  },
   'section.none': {
     what: (p) => `Frame line ${shown(p.element?.id)} has no section to give the member.`,
     kept: 'The building is as it was.',
@@ -162,6 +225,18 @@ export const catalogue = {
     what: (p) => `Section ${shown(p.value)} is that of ${list(p.detail?.members)}.`,
     kept: 'The building is as it was.',
     todo: () => 'Give those members another section first.',
+  },
+  'sight.lengthless': {
+    what: (p) =>
+      `Round ${p.detail?.round}, row ${p.detail?.row}: the sight to ${p.detail?.point} has no length, or the instrument a standard deviation of zero.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Book the length of the sight above zero, and the standard deviation of the instrument.',
+  },
+  'sight.missing': {
+    what: (p) =>
+      `Round ${p.detail?.round}, row ${p.detail?.row}: the length of the sight to ${p.detail?.point} is not booked.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Book it, or give the standard deviation of a setup instead of that of a kilometre.',
   },
   'support.read': {
     what: (p) =>
