@@ -97,6 +97,8 @@ function fromBook(
   const numbered = numberBook(book, building)
   const { ids, held, reduced } = numbered
   if (reduced.before.length) throw bookFault('book.unopened', round, reduced.before[0]!)
+  if (book.sd_mm_per_sqrt_km === undefined && book.sd_mm_per_setup === undefined)
+    throw new Fault('book.sdless', { element: { kind: 'round', id: round.id }, detail: { round: round.id } })
   const variance = reduced.readings.map((reading) => {
     const value = readingVariance(book, reading.length)
     if (value === undefined) throw bookFault('sight.missing', round, reading.row)

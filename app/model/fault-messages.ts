@@ -34,6 +34,12 @@ export const catalogue = {
     kept: NOTHING_WRITTEN,
     todo: (p) => `Write it as: ${p.detail?.usage ?? 'levelstead --help'}`,
   },
+  'book.sdless': {
+    what: (p) =>
+      `Round ${p.detail?.round}: no standard deviation of the instrument is given, neither for a kilometre nor for a setup.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Give one of the two; the levels can be reduced without it, but not adjusted.',
+  },
   'book.unopened': {
     what: (p) => `Round ${p.detail?.round}, row ${p.detail?.row}: ${p.detail?.point} is read before any backsight.`,
     kept: 'The readings are as they were.',
@@ -49,6 +55,11 @@ export const catalogue = {
     what: (p) => `There is no room left to write ${shown(p.file)}.`,
     kept: 'What stood under that name is as it was.',
     todo: () => 'Free some space, or write to another disk.',
+  },
+  'element.unknown': {
+    what: (p) => `There is no ${p.element?.kind ?? 'element'} ${shown(p.value)} in these findings.`,
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Choose one of those that the findings list.',
   },
   'file.busy': {
     what: (p) => `${shown(p.file)} is in use by another program.`,
@@ -215,6 +226,21 @@ export const catalogue = {
     what: (p) => `In round ${p.element?.id} no chain of readings joins ${list(p.detail?.points)} to a benchmark.`,
     kept: 'The readings are as they were.',
     todo: () => 'Book the readings that join them, or give the level of a benchmark that was read.',
+  },
+  'row.pointless': {
+    what: (p) => `Row ${p.detail?.row} names no point.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Name the point that was read.',
+  },
+  'row.readingless': {
+    what: (p) => `Row ${p.detail?.row}, ${p.detail?.point}: no staff reading is booked.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Book the reading, or take the row away.',
+  },
+  'row.unusable': {
+    what: (p) => `Row ${p.detail?.row}, ${p.detail?.point}: ${shown(p.value)} is no length or reading.`,
+    kept: 'The readings are as they were.',
+    todo: () => 'Write it as a number in metres.',
   },
   'section.none': {
     what: (p) => `Frame line ${shown(p.element?.id)} has no section to give the member.`,
