@@ -63,7 +63,8 @@ export function bendingAt(along: MemberAlong, s: number): number {
  *
  * @param along as for bendingAt
  * @param s     0 <= s <= length [m]; values outside are taken to the nearer end
- * @param side  under a point load: `before` it (towards `from`) or `after` it; default `after`
+ * @param side  under a point load: `before` it (towards `from`) or `after` it; default `after`. A load that stands over
+ *              an end is left out by `after` at 0 and by `before` at L
  * @returns     [kN]; positive where bending grows towards `to`
  * @source  statics of a simply supported beam, common practice
  * @example
@@ -78,7 +79,7 @@ export function shearAt(along: MemberAlong, s: number, side: 'before' | 'after' 
   for (const load of along.loads) {
     if (load.kind === 'uniform') free += load.w * (L / 2 - at)
     else {
-      const isBefore = at < load.a || (at === load.a && (side === 'before' || at === L))
+      const isBefore = at < load.a || (at === load.a && side === 'before')
       free += (load.P * (isBefore ? L - load.a : -load.a)) / L
     }
   }
