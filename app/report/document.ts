@@ -1,5 +1,5 @@
 /** The condition report as a pdfmake definition, section by section. */
-import type { TDocumentDefinitions } from 'pdfmake/interfaces'
+import type { TDocumentDefinitions } from 'pdfmake/interfaces.js'
 import { CAUTION_LINE } from '../model/cautions.ts'
 import { MARGIN, POINTS, type ReportInput } from './input.ts'
 import { drawings } from './sections/drawings.ts'

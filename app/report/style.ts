@@ -1,5 +1,5 @@
 /** The report's page type and table rules: paper, ink and thin lines, as in the window. */
-import type { Content, ContentTable, CustomTableLayout, StyleDictionary, TableCell } from 'pdfmake/interfaces'
+import type { Content, ContentTable, CustomTableLayout, StyleDictionary, TableCell } from 'pdfmake/interfaces.js'
 import { svg } from '../drawing/svg.ts'
 import { printTheme } from '../drawing/theme.ts'
 import type { Scene } from '../drawing/scene.ts'

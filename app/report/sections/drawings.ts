@@ -1,5 +1,5 @@
 /** The plan and the worst elevations, by the same drawing code as the window. */
-import type { Content } from 'pdfmake/interfaces'
+import type { Content } from 'pdfmake/interfaces.js'
 import { elevation } from '../../drawing/elevation.ts'
 import { plan } from '../../drawing/plan.ts'
 import { byWorst, worse, type FrameLineFinding, type Status } from '../../model/findings.ts'

@@ -1,5 +1,5 @@
 /** The flagged members and spans, worst first, with what makes them so. */
-import type { Content } from 'pdfmake/interfaces'
+import type { Content } from 'pdfmake/interfaces.js'
 import { because, type BecauseTarget } from '../../assess/because.ts'
 import { byWorst } from '../../model/findings.ts'
 import { millimetres, moment } from '../../model/numbers.ts'

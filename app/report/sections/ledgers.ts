@@ -1,5 +1,5 @@
 /** The tables of supports, spans and members, worst first. */
-import type { Content, TableCell } from 'pdfmake/interfaces'
+import type { Content, TableCell } from 'pdfmake/interfaces.js'
 import { byWorst, type MemberFinding, type SpanFinding } from '../../model/findings.ts'
 import { millimetres, moment, percent, ratio } from '../../model/numbers.ts'
 import type { ReportInput } from '../input.ts'

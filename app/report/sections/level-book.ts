@@ -1,5 +1,5 @@
 /** The level book as a surveyor would lay out the page. */
-import type { Content } from 'pdfmake/interfaces'
+import type { Content } from 'pdfmake/interfaces.js'
 import { bookView } from '../../assess/level-book.ts'
 import { level, millimetres } from '../../model/numbers.ts'
 import type { ReportInput } from '../input.ts'

@@ -1,5 +1,5 @@
 /** What was measured in this round, and how sure it is. */
-import type { Content } from 'pdfmake/interfaces'
+import type { Content } from 'pdfmake/interfaces.js'
 import { level, millimetres } from '../../model/numbers.ts'
 import type { Levelling } from '../../model/findings.ts'
 import type { ReportInput } from '../input.ts'

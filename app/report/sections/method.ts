@@ -1,5 +1,5 @@
 /** Method and assumptions, limits with their sources, what is not covered, sign-off and verification. */
-import type { Content } from 'pdfmake/interfaces'
+import type { Content } from 'pdfmake/interfaces.js'
 import { percent, ratio } from '../../model/numbers.ts'
 import type { ReportInput } from '../input.ts'
 import { table } from '../style.ts'

@@ -1,5 +1,5 @@
 /** The first page: what it is about, its status in a word and a shape, the caution, and who stands for it. */
-import type { Content } from 'pdfmake/interfaces'
+import type { Content } from 'pdfmake/interfaces.js'
 import { CAUTIONS, RED_CAUTION } from '../../model/cautions.ts'
 import type { RoundFindings, Status } from '../../model/findings.ts'
 import type { ReportInput } from '../input.ts'
