@@ -128,6 +128,25 @@ export interface Levelling {
   uncontrolled_rows?: number[]
 }
 
+/** A member or a span that a trigger is held against. */
+export type Triggered =
+  { kind: 'member'; line: string; id: string } | { kind: 'span'; line: string; from: string; to: string }
+
+/** A trigger reached after further settlement of one support alone. */
+export interface Reach {
+  left_mm: number
+  /** From the survey's uncertainty of the value that reaches the trigger. */
+  sd_mm: number
+  target: Triggered
+}
+
+/** Millimetres left at a support until the first member or span below a trigger reaches it; absent: not within 1 m. */
+export interface SupportHeadroom {
+  support: string
+  amber?: Reach
+  red?: Reach
+}
+
 export interface Tilt {
   x_rad: number
   y_rad: number
