@@ -1,29 +1,11 @@
 /** The catalogue of fault sentences by code. A test goes through all codes and fails on a missing one. */
-import type { Place } from './faults.ts'
+import { list, NOTHING_WRITTEN, shown, type FaultMessage } from './fault-words.ts'
+import { inputMessages } from './input-messages.ts'
 
-export interface FaultMessage {
-  what: (place: Place) => string
-  kept: string
-  todo: (place: Place) => string
-}
-
-/** A value as it is shown in a sentence: short, quoted where it is text. */
-export function shown(value: unknown): string {
-  if (value === undefined) return 'nothing'
-  if (typeof value === 'number') return String(value)
-  const text = JSON.stringify(value) ?? String(value)
-  return text.length > 60 ? `${text.slice(0, 57)}...` : text
-}
-
-/** Names in a sentence: the first few, and how many more. */
-function list(names: unknown): string {
-  const all = Array.isArray(names) ? names.map(String) : []
-  return all.length > 4 ? `${all.slice(0, 3).join(', ')} and ${all.length - 3} more` : all.join(', ')
-}
-
-const NOTHING_WRITTEN = 'Nothing was written.'
+export { shown, type FaultMessage } from './fault-words.ts'
 
 export const catalogue = {
+  ...inputMessages,
   'argument.missing': {
     what: (p) => `${shown(p.value)} needs ${p.path ?? 'a file'}.`,
     kept: NOTHING_WRITTEN,
@@ -78,7 +60,8 @@ export const catalogue = {
     todo: () => 'Name a file.',
   },
   'file.large': {
-    what: (p) => `${shown(p.file)} is too large to be one of ours: ${shown(p.value)} bytes.`,
+    what: (p) =>
+      `${p.file === undefined ? 'The file' : shown(p.file)} is too large to be one of ours: ${shown(p.value)} bytes${p.detail?.most === undefined ? '' : `; ${p.detail.most} is the most that is read`}.`,
     kept: NOTHING_WRITTEN,
     todo: () => 'Check that this is the right file.',
   },
