@@ -1,11 +1,13 @@
 /** The catalogue of fault sentences by code. A test goes through all codes and fails on a missing one. */
-import { list, NOTHING_WRITTEN, shown, type FaultMessage } from './fault-words.ts'
+import { list, NOTHING_WRITTEN, shown, subject, type FaultMessage } from './fault-words.ts'
 import { inputMessages } from './input-messages.ts'
+import { projectMessages } from './project-messages.ts'
 
 export { shown, type FaultMessage } from './fault-words.ts'
 
 export const catalogue = {
   ...inputMessages,
+  ...projectMessages,
   'argument.missing': {
     what: (p) => `${shown(p.value)} needs ${p.path ?? 'a file'}.`,
     kept: NOTHING_WRITTEN,
@@ -139,7 +141,10 @@ export const catalogue = {
     todo: () => 'Correct its section and loads.',
   },
   'name.empty': {
-    what: (p) => `The ${p.element?.kind ?? 'thing'} has no name.`,
+    what: (p) =>
+      p.path === undefined
+        ? `The ${p.element?.kind ?? 'thing'} has no name.`
+        : `${subject(p)} is blank where a name must stand.`,
     kept: 'The building is as it was.',
     todo: () => 'Give it a name.',
   },

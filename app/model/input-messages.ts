@@ -185,7 +185,7 @@ export const inputMessages = {
     todo: () => 'Name the support of each node at its foot.',
   },
   'triggers.reversed': {
-    what: (p) => `${subject(p)}: amber ${shown(p.value)} is above red ${p.detail?.red}.`,
+    what: (p) => `${subject(p)}: amber ${p.detail?.amber} is above red ${p.detail?.red}.`,
     kept: AS_WAS,
     todo: () => 'Give amber the lower value of the two.',
   },

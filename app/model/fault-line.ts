@@ -1,0 +1,19 @@
+/** A fault as one line of text, for the screen of a terminal and for logs. */
+import { words, type FaultRecord } from './faults.ts'
+import { shown } from './fault-words.ts'
+
+/** `error: FILE: PATH: value VALUE: what is wrong; what to do`, always in one line. */
+export function errorLine(record: FaultRecord, file?: string): string {
+  const { place } = record
+  const { what, todo } = words(record)
+  const name = place.file ?? file
+  const parts = ['error']
+  if (name !== undefined) parts.push(name)
+  if (place.path !== undefined && place.path !== '') parts.push(place.path)
+  if (place.value !== undefined && place.path !== undefined) parts.push(`value ${shown(place.value)}`)
+  else if (record.code === 'key.missing') parts.push('value missing')
+  const told = `${parts.join(': ')}: ${what.replace(/\.$/, '')}; ${todo}`
+  // What a file holds must not break the line or steer the terminal.
+  // eslint-disable-next-line no-control-regex
+  return told.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, ' ')
+}
