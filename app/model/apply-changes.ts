@@ -50,6 +50,8 @@ function applyChange(building: Building, change: Change): Building {
     case 'member':
       return withLine(building, change, (line) => ({ ...line, members: put(line.members, change, refOf(change)) }))
   }
+  // Changes come over a wire as well, where no compiler has looked at them.
+  throw new Fault('request.malformed', { path: 'changes', value: (change as { kind: unknown }).kind })
 }
 
 function withHead(building: Building, change: Extract<Change, { kind: 'head' }>): Building {
@@ -92,7 +94,7 @@ function withLine(building: Building, change: { line: string }, put: (line: Fram
 
 function put<T extends Entity>(list: readonly T[], { id, at, before, after }: Step<T>, ref: ElementRef): T[] {
   const index = list.findIndex((entity) => entity.id === id)
-  if (!same(list[index] ?? null, before)) throw unfit(ref)
+  if (!same(list[index] ?? null, before) || (after !== null && after.id !== id)) throw unfit(ref)
   const rest = [...list]
   if (after === null) {
     if (index < 0 || (at !== undefined && at !== index)) throw unfit(ref)

@@ -14,6 +14,5 @@ export function errorLine(record: FaultRecord, file?: string): string {
   else if (record.code === 'key.missing') parts.push('value missing')
   const told = `${parts.join(': ')}: ${what.replace(/\.$/, '')}; ${todo}`
   // What a file holds must not break the line or steer the terminal.
-  // eslint-disable-next-line no-control-regex
   return told.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, ' ')
 }
