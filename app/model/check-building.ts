@@ -12,6 +12,7 @@ import { Entry } from './check/entry.ts'
 import { FaultsFound } from './check/faults-found.ts'
 import { filled } from './edits/difference.ts'
 import { InputFault } from './faults.ts'
+import { slips } from './nearest.ts'
 
 const FORMAT = 'levelstead-building'
 const NEWEST = 1
@@ -38,7 +39,7 @@ export function checkBuilding(value: unknown, file?: string, { unfinished = fals
   entry.element = undefined
   const supports = checkSupports(entry)
   const sections = checkSections(entry)
-  const known = { supports: names(supports), sections: names(sections), unfinished }
+  const known = { supports: byName(supports), sections: byName(sections), unfinished }
   const building: Building = filled({
     format: FORMAT,
     version: NEWEST,
@@ -72,7 +73,7 @@ export function checkRound(value: unknown, building: Pick<Building, 'survey'>, f
 function isOurs(value: unknown, faults: FaultsFound): boolean {
   if (typeof value !== 'object' || value === null || Array.isArray(value)) return true
   const { format, version } = value as Record<string, unknown>
-  const isNear = typeof format !== 'string' || faults.nearest(format, [FORMAT]).nearest !== undefined
+  const isNear = typeof format !== 'string' || slips(format.toLowerCase(), FORMAT) <= 2
   if (Object.hasOwn(value, 'format') && format !== FORMAT && !isNear)
     faults.add('file.foreign', { path: 'format', value: format })
   else if (typeof version === 'number' && version > NEWEST)
@@ -82,6 +83,6 @@ function isOurs(value: unknown, faults: FaultsFound): boolean {
   return faults.all.length === 0
 }
 
-function names(entities: readonly { id: string }[]): ReadonlySet<string> {
-  return new Set(entities.map((entity) => entity.id).filter((id) => id !== ''))
+function byName<T extends { id: string }>(entities: readonly T[]): ReadonlyMap<string, T> {
+  return new Map(entities.filter((entity) => entity.id !== '').map((entity) => [entity.id, entity]))
 }

@@ -12,7 +12,8 @@ export function errorLine(record: FaultRecord, file?: string): string {
   if (place.path !== undefined && place.path !== '') parts.push(place.path)
   if (place.value !== undefined && place.path !== undefined) parts.push(`value ${shown(place.value)}`)
   else if (record.code === 'key.missing') parts.push('value missing')
-  const told = `${parts.join(': ')}: ${what.replace(/\.$/, '')}; ${todo}`
+  const plain = what.startsWith(`${place.path}: `) ? what.slice(place.path!.length + 2) : what
+  const told = `${parts.join(': ')}: ${plain.replace(/\.$/, '')}; ${todo}`
   // What a file holds must not break the line or steer the terminal.
   return told.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, ' ')
 }

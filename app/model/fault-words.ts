@@ -25,7 +25,7 @@ export function list(names: unknown): string {
 
 /** The element and key that a value stands at: `Section beam-300x600: E_GPa`. */
 export function subject(place: Place): string {
-  const key = place.path === undefined ? 'the value' : (/[^.]+$/.exec(place.path)?.[0] ?? place.path)
+  const key = /[^.]+$/.exec(place.path ?? '')?.[0] ?? 'What was read'
   const { element } = place
   if (!element || element.id === '' || element.kind === 'building' || element.kind === 'criteria') return key
   const within =

@@ -184,6 +184,12 @@ export const inputMessages = {
     kept: AS_WAS,
     todo: () => 'Name the support of each node at its foot.',
   },
+  'support.scaled': {
+    what: (p) =>
+      `Supports ${list(p.detail?.supports)} are ${p.detail?.plan} m apart in plan and ${p.detail?.along} m in frame line ${p.detail?.line}.`,
+    kept: AS_WAS,
+    todo: () => 'Give both in metres; one of them looks like millimetres.',
+  },
   'triggers.reversed': {
     what: (p) => `${subject(p)}: amber ${p.detail?.amber} is above red ${p.detail?.red}.`,
     kept: AS_WAS,

@@ -7,8 +7,8 @@
 
 export interface JsonText {
   value: unknown
-  /** Paths of keys that stand twice, in order. */
-  repeated: string[]
+  /** Keys that stand twice, in order, with what stands there the second time. */
+  repeated: { path: string; value: unknown }[]
 }
 
 /** A slip in the text, counted from 1. */
@@ -87,7 +87,7 @@ class Reader {
   private readonly text: string
   private at = 0
   private readonly steps: (string | number)[] = []
-  private readonly repeated: string[] = []
+  private readonly repeated: JsonText['repeated'] = []
 
   constructor(text: string) {
     this.text = text
@@ -174,10 +174,11 @@ class Reader {
       if (this.text[this.at] !== '"') throw new Slip(this.at, 'a key in double quotes')
       const key = this.string()
       this.steps[this.steps.length - 1] = key
-      if (Object.hasOwn(object, key) && this.repeated.length < MOST_REPEATED) this.repeated.push(this.path())
+      const again = Object.hasOwn(object, key) && this.repeated.length < MOST_REPEATED ? this.path() : undefined
       this.skipBlanks()
       if (!this.takes(':')) throw new Slip(this.at, 'a colon')
       const value = this.value()
+      if (again !== undefined) this.repeated.push({ path: again, value })
       if (key === '__proto__')
         Object.defineProperty(object, key, { value, enumerable: true, configurable: true, writable: true })
       else object[key] = value

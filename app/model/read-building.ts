@@ -1,6 +1,7 @@
 /** A building file, from its text or bytes to a building or to the list of all its faults. */
 import type { Building } from './building.ts'
 import { checkBuilding, type CheckOptions } from './check-building.ts'
+import { FaultsFound } from './check/faults-found.ts'
 import { decodeText } from './decode-text.ts'
 import { faultsOf, InputFault, type FaultRecord, type Place } from './faults.ts'
 import { DEEPEST, parseJson, type JsonSlip } from './json-text.ts'
@@ -12,15 +13,16 @@ export function readBuilding(input: string | Uint8Array, file?: string, options?
   const parsed = parseJson(text)
   if ('slip' in parsed) throw new InputFault([slipFault(parsed.slip, place)])
   const { value, repeated } = parsed.json
-  const faults = repeated.map((path): FaultRecord => ({ code: 'key.repeated', place: { ...place, path } }))
+  const faults = new FaultsFound(file)
+  for (const twice of repeated) faults.add('key.repeated', twice)
   try {
     const building = checkBuilding(value, file, options)
-    if (faults.length === 0) return building
+    if (faults.all.length === 0) return building
   } catch (error) {
     if (!(error instanceof InputFault)) throw error
-    faults.push(...error.faults)
+    throw new InputFault([...faults.all, ...error.faults])
   }
-  throw new InputFault(faults)
+  throw new InputFault(faults.all)
 }
 
 function textOf(input: string | Uint8Array, file?: string): string {

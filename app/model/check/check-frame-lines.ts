@@ -1,5 +1,5 @@
 /** Frame lines of a building file: nodes, members and loads, each held to what it refers to. */
-import type { Action, Base, FrameLine, FrameNode, Member, MemberKind, MemberLoad } from '../building.ts'
+import type { Action, Base, FrameLine, FrameNode, Member, MemberKind, MemberLoad, Support } from '../building.ts'
 import { filled } from '../edits/difference.ts'
 import { checkCapacity, COORDINATE } from './check-sections.ts'
 import { noteHanging } from './connection.ts'
@@ -13,8 +13,8 @@ const MEMBER_KEYS = ['id', 'kind', 'from', 'to', 'section', 'pin_from', 'pin_to'
 const LONGEST_M = 1000
 
 export interface Known {
-  supports: ReadonlySet<string>
-  sections: ReadonlySet<string>
+  supports: ReadonlyMap<string, Support>
+  sections: ReadonlyMap<string, unknown>
   /** Parts that are joined to no support yet are let through: the description is being typed. */
   unfinished: boolean
 }
@@ -63,6 +63,7 @@ function checkNodes(line: Entry, within: string, known: Known): FrameNode[] {
     return node
   })
   noteRepeated(line.faults, 'node', names, within)
+  noteScale(line, nodes, known)
   return nodes
 }
 
@@ -143,6 +144,27 @@ function checkLoad(member: Entry, value: unknown, path: string, length: number):
   const action = entry.choice('action', ACTIONS)
   if (kind === 'uniform') return entry.has('kind') ? { kind, kN_per_m: entry.number('kN_per_m'), action } : none
   const at_m = entry.number('at_m', { least: 0, remedy: 'Give the distance in metres from the node of "from".' })
-  if (at_m > length * (1 + 1e-9)) entry.fault('load.beyond', 'at_m', { length: Number(length.toPrecision(6)) })
+  if (at_m > length * (1 + 1e-9)) entry.fault('load.beyond', 'at_m', { length: rounded(length) })
   return { kind, kN: entry.number('kN'), at_m, action }
+}
+
+/** Plan and frame line tell the same distances; where one is a hundred times the other, the units differ. */
+function noteScale(line: Entry, nodes: readonly FrameNode[], known: Known): void {
+  const standing = nodes.flatMap((node, i) => {
+    const support = node.support === undefined ? undefined : known.supports.get(node.support)
+    return support ? [{ node, support, path: `${line.at('nodes')}[${i}].x_m` }] : []
+  })
+  const [first, ...others] = standing
+  for (const { node, support, path } of others) {
+    const plan = Math.hypot(support.x_m - first!.support.x_m, support.y_m - first!.support.y_m)
+    const along = Math.abs(node.x_m - first!.node.x_m)
+    if (!(plan > 0 && along > 0) || (plan < 100 * along && along < 100 * plan)) continue
+    const supports = [first!.support.id, support.id]
+    const detail = { line: line.element!.id, supports, plan: rounded(plan), along: rounded(along) }
+    line.faults.add('support.scaled', { path, value: node.x_m, element: line.element!, detail })
+  }
+}
+
+function rounded(length: number): number {
+  return Number(length.toPrecision(6))
 }

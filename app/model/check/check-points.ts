@@ -5,7 +5,10 @@ import { Entry, noteRepeated, type NumberRule } from './entry.ts'
 /** Between the deepest mine and the highest town; a level in millimetres lies outside. */
 export const LEVEL: NumberRule = { least: -5000, most: 9000, remedy: 'Give the level in metres.' }
 
-export function checkPoints(survey: Entry, supports: ReadonlySet<string>): SurveyPoint[] {
+export function checkPoints(
+  survey: Entry,
+  supports: { has(id: string): boolean; keys(): Iterable<string> },
+): SurveyPoint[] {
   const names: { id: string; path: string }[] = []
   const points = survey.list('points', (value, path): SurveyPoint => {
     const isStud = typeof value === 'object' && value !== null && (value as { kind?: unknown }).kind === 'stud'

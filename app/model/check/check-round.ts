@@ -52,6 +52,7 @@ function checkDate(round: Entry): string {
 
 function checkLevels(round: Entry, within: string, points: ReadonlyMap<string, SurveyPoint>): GivenLevel[] {
   const first = new Map<string, string>()
+  const unread = unreadPoints(round.value('levels'), points)
   let row = 0
   const levels = round.list('levels', (value, path): GivenLevel => {
     row += 1
@@ -61,11 +62,18 @@ function checkLevels(round: Entry, within: string, points: ReadonlyMap<string, S
     const point = entry.name('point')
     const before = first.get(point)
     if (point.trim() === '') return { point, level_m: NaN, sd_mm: NaN }
-    if (!points.has(point)) entry.fault('point.unknown', 'point', round.faults.nearest(point, points.keys()))
+    if (!points.has(point)) entry.fault('point.unknown', 'point', round.faults.nearest(point, unread))
     if (before !== undefined) entry.fault('point.repeated', 'point', { first: before })
     else first.set(point, path)
     return { point, level_m: entry.number('level_m', LEVEL), sd_mm: entry.number('sd_mm', SD) }
   })
   if (row === 0 && Array.isArray(round.value('levels'))) round.fault('list.empty', 'levels', { of: 'level' })
   return levels
+}
+
+/** A misspelt point most likely stands for one that the round has not. */
+function unreadPoints(levels: unknown, points: ReadonlyMap<string, SurveyPoint>): string[] {
+  const rows: unknown[] = Array.isArray(levels) ? levels : []
+  const read = new Set(rows.map((row) => (row as { point?: unknown } | null)?.point))
+  return [...points.keys()].filter((point) => !read.has(point))
 }

@@ -5,7 +5,11 @@ import { checkPoints } from './check-points.ts'
 import { checkRoundEntry, roundEntry } from './check-round.ts'
 import { noteRepeated, type Entry } from './entry.ts'
 
-export function checkSurvey(building: Entry, supports: ReadonlySet<string>, unfinished: boolean): Survey {
+export function checkSurvey(
+  building: Entry,
+  supports: { has(id: string): boolean; keys(): Iterable<string> },
+  unfinished: boolean,
+): Survey {
   const entry = building.entry('survey', ['points', 'baseline', 'rounds'], 'needed')
   if (!entry) return { points: [], rounds: [] }
   const points = checkPoints(entry, supports)

@@ -24,6 +24,8 @@ export class Entry {
   element: ElementRef | undefined
   readonly faults: FaultsFound
   private readonly raw: Readonly<Record<string, unknown>>
+  /** Keys that stand there under a name not quite theirs: told once, and not as missing also. */
+  private readonly misspelt = new Set<string>()
 
   private constructor(
     faults: FaultsFound,
@@ -58,7 +60,9 @@ export class Entry {
     for (const key of Object.keys(value)) {
       if (keys.includes(key)) continue
       const free = keys.filter((known) => !Object.hasOwn(value, known))
-      entry.fault('key.unknown', key, { key, keys, ...faults.nearest(key, free) })
+      const near = faults.nearest(key, free)
+      if (near.nearest !== undefined) entry.misspelt.add(near.nearest)
+      entry.fault('key.unknown', key, { key, keys, ...near })
     }
     return entry
   }
@@ -119,7 +123,8 @@ export class Entry {
 
   choice<T extends string>(key: string, choices: readonly T[]): T {
     const [first] = choices
-    if (!this.required(key, `one of ${choices.join(', ')}`)) return first!
+    const wanted = choices.map((choice) => `"${choice}"`).join(' or ')
+    if (!this.required(key, wanted)) return first!
     const value = this.raw[key]
     const chosen = choices.find((choice) => choice === value)
     if (chosen === undefined) this.fault('choice.unknown', key, { choices, ...this.faults.nearest(value, choices) })
@@ -151,7 +156,7 @@ export class Entry {
 
   private required(key: string, wanted: string): boolean {
     if (this.has(key)) return true
-    this.fault('key.missing', key, { wanted })
+    if (!this.misspelt.has(key)) this.fault('key.missing', key, { wanted })
     return false
   }
 
