@@ -8,26 +8,36 @@ import { Fault, type Place } from './faults.ts'
 const MOST_BYTES = 128 * 1024 * 1024
 const STRIDE = 8192
 
+export interface DecodeOptions {
+  /** Text that is not UTF-8 is read as Windows-1252, as spreadsheets save tables. */
+  windows1252?: boolean
+}
+
 /** The text of a file. Throws a Fault where it is empty, too large, or not text. */
-export function decodeText(input: string | Uint8Array, file?: string): string {
+export function decodeText(input: string | Uint8Array, file?: string, options: DecodeOptions = {}): string {
   const place: Place = file === undefined ? {} : { file }
   if (input.length > MOST_BYTES)
     throw new Fault('file.large', { ...place, value: input.length, detail: { most: MOST_BYTES } })
-  const text = typeof input === 'string' ? input : textOf(input, place)
+  const text = typeof input === 'string' ? input : textOf(input, place, options)
   const clean = text.charCodeAt(0) === 0xfeff ? text.slice(1) : text
   if (clean.trim() === '') throw new Fault('file.empty', place)
   if (clean.includes('\0')) throw new Fault('file.binary', place)
   return clean
 }
 
-function textOf(bytes: Uint8Array, place: Place): string {
+function textOf(bytes: Uint8Array, place: Place, { windows1252 = false }: DecodeOptions): string {
   const [a, b, c, d] = bytes
   if (startsWith(bytes, 'SQLite format 3\0')) throw new Fault('file.project', place)
   if (a === 0xff && b === 0xfe && !(c === 0 && d === 0)) return utf16(bytes.subarray(2), true, place)
   if (a === 0xfe && b === 0xff) return utf16(bytes.subarray(2), false, place)
   if (a !== 0 && b === 0 && c !== 0 && d === 0) return utf16(bytes, true, place)
   if (a === 0 && b !== 0 && c === 0 && d !== 0) return utf16(bytes, false, place)
-  return utf8(bytes, place)
+  try {
+    return utf8(bytes, place)
+  } catch (error) {
+    if (windows1252 && error instanceof Fault && error.code === 'file.garbled') return fromWindows1252(bytes, place)
+    throw error
+  }
 }
 
 function startsWith(bytes: Uint8Array, head: string): boolean {
@@ -43,6 +53,20 @@ function utf16(bytes: Uint8Array, littleEnd: boolean, place: Place): string {
       units.push(littleEnd ? bytes[i]! | (bytes[i + 1]! << 8) : (bytes[i]! << 8) | bytes[i + 1]!)
     parts.push(String.fromCharCode(...units))
   }
+  return parts.join('')
+}
+
+/** What bytes 0x80 to 0x9f stand for in Windows-1252; a blank where they stand for nothing. */
+const WINDOWS_1252 = '€ ‚ƒ„…†‡ˆ‰Š‹Œ Ž  ‘’“”•–—˜™š›œ žŸ'
+
+function fromWindows1252(bytes: Uint8Array, place: Place): string {
+  const parts: string[] = []
+  bytes.forEach((byte, i) => {
+    const sign = byte >= 0x80 && byte < 0xa0 ? WINDOWS_1252[byte - 0x80]! : String.fromCharCode(byte)
+    if (sign === ' ' && byte !== 0x20)
+      throw new Fault('file.garbled', { ...place, detail: { byte: i + 1, wanted: 'UTF-8 or Windows-1252' } })
+    parts.push(sign)
+  })
   return parts.join('')
 }
 

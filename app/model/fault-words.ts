@@ -25,6 +25,7 @@ export function list(names: unknown): string {
 
 /** The element and key that a value stands at: `Section beam-300x600: E_GPa`. */
 export function subject(place: Place): string {
+  if (place.path?.startsWith('row ')) return `R${place.path.slice(1)}`
   const key = /[^.]+$/.exec(place.path ?? '')?.[0] ?? 'What was read'
   const { element } = place
   if (!element || element.id === '' || element.kind === 'building' || element.kind === 'criteria') return key

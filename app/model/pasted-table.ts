@@ -2,9 +2,10 @@
  * Text pasted from a spreadsheet or a readings file, as rows of cells, and what its headings are taken for.
  * The numbers in it are left as they were written: the grid that takes them reads and checks each cell.
  */
+import { delimitedRows, type Separator } from './delimited-rows.ts'
 
 export interface PastedTable {
-  separator: 'tab' | 'semicolon' | 'comma' | 'none'
+  separator: Separator
   /** Present where the first row names at least two columns that a grid can take. */
   header?: string[]
   rows: string[][]
@@ -12,8 +13,6 @@ export interface PastedTable {
 
 export type ReadingColumn =
   'round' | 'date' | 'point' | 'back_m' | 'mid_m' | 'fore_m' | 'sight_m' | 'back_sight_m' | 'level_m' | 'sd_mm'
-
-const SEPARATORS = { tab: '\t', semicolon: ';', comma: ',', none: '\n' } as const
 
 /** Words that stand over each column in practice, without space, sign and unit. */
 const HEADINGS: Record<ReadingColumn, readonly string[]> = {
@@ -33,7 +32,7 @@ const HEADINGS: Record<ReadingColumn, readonly string[]> = {
 export function pastedTable(text: string): PastedTable {
   const clean = text.replace(/^\uFEFF/, '').replace(/\r\n?/g, '\n')
   const separator = separatorOf(clean)
-  const all = rowsOf(clean, SEPARATORS[separator]).filter((row) => row.some((cell) => cell !== ''))
+  const all = delimitedRows(clean, separator).rows.filter((row) => row.some((cell) => cell !== ''))
   const named = all[0] ? columnsNamed(all[0]).filter((column) => column !== null).length : 0
   return named >= 2 ? { separator, header: all[0]!, rows: all.slice(1) } : { separator, rows: all }
 }
@@ -49,22 +48,26 @@ export function columnsNamed(header: readonly string[]): (ReadingColumn | null)[
   })
 }
 
+/** A heading that names another unit than the column's is not taken: nothing is a thousand times wrong in silence. */
 function columnOf(heading: string): ReadingColumn | undefined {
   const plain = heading.trim().toLowerCase()
-  const own = (Object.keys(HEADINGS) as ReadingColumn[]).find((column) => column === plain)
+  const columns = Object.keys(HEADINGS) as ReadingColumn[]
+  const own = columns.find((column) => column === plain)
   if (own) return own
-  const word = plain
-    .replace(/[([].*$/, '')
-    .replace(/[\s_-]+(m|mm)$/, '')
-    .replace(/[^a-z]/g, '')
-  return (Object.keys(HEADINGS) as ReadingColumn[]).find((column) => HEADINGS[column].includes(word))
+  const parts = /^(?<name>.*?)(?:[\s_-]*[([]\s*(?<inner>[a-zµ]*)\s*[)\]]|[\s_-]+(?<outer>mm|cm|km|m|ft|in))?$/u.exec(
+    plain,
+  )
+  const unit = parts?.groups?.inner ?? parts?.groups?.outer ?? ''
+  const word = (parts?.groups?.name ?? plain).replace(/[^a-z]/g, '')
+  const column = columns.find((c) => HEADINGS[c].includes(word))
+  return column && (unit === '' || column.endsWith(`_${unit}`)) ? column : undefined
 }
 
 /**
  * A tab always separates, a semicolon separates where there is no tab. A comma separates only where it cannot
  * be a decimal comma: where a row holds a point as well, or a word, or two commas and more.
  */
-function separatorOf(text: string): PastedTable['separator'] {
+function separatorOf(text: string): Separator {
   if (text.includes('\t')) return 'tab'
   if (text.includes(';')) return 'semicolon'
   const lines = text.split('\n').filter((line) => line.trim() !== '')
@@ -73,34 +76,4 @@ function separatorOf(text: string): PastedTable['separator'] {
     return cells.length > 2 || (cells.length === 2 && !/^\s*[-+]?\d+,\d+\s*$/.test(line))
   })
   return separates ? 'comma' : 'none'
-}
-
-function rowsOf(text: string, separator: string): string[][] {
-  const rows: string[][] = []
-  let row: string[] = []
-  let cell = ''
-  let quoted = false
-  function endCell(): void {
-    row.push(cell.trim())
-    cell = ''
-  }
-  for (let i = 0; i < text.length; i++) {
-    const sign = text[i]!
-    if (quoted) {
-      if (sign !== '"') cell += sign
-      else if (text[i + 1] === '"') cell += text[i++]
-      else quoted = false
-    } else if (sign === '"' && cell.trim() === '') {
-      quoted = true
-      cell = ''
-    } else if (sign === '\n') {
-      endCell()
-      rows.push(row)
-      row = []
-    } else if (sign === separator) endCell()
-    else cell += sign
-  }
-  endCell()
-  rows.push(row)
-  return rows
 }
