@@ -5,7 +5,20 @@
 import type { Change } from '../app/model/changes.ts'
 import { Fault } from '../app/model/faults.ts'
 import { prepared, type WriteDb } from './connection.ts'
-import { COLUMNS, memberOf, memberRow, nodeOf, nodeRow, pointOf, pointRow, sectionOf, sectionRow, supportOf, supportRow, type Row } from './rows.ts'
+import {
+  COLUMNS,
+  memberOf,
+  memberRow,
+  nodeOf,
+  nodeRow,
+  pointOf,
+  pointRow,
+  sectionOf,
+  sectionRow,
+  supportOf,
+  supportRow,
+  type Row,
+} from './rows.ts'
 
 type EntityChange = Exclude<Change, { kind: 'head' | 'criteria' }>
 type Kind = EntityChange['kind']
@@ -66,12 +79,18 @@ function applyEntity(db: WriteDb, change: EntityChange): Change {
   const table = TABLE[change.kind]
   const line = 'line' in change ? change.line : undefined
   const scope = line === undefined ? '' : 'line = @line AND '
-  const found = prepared(db, `SELECT ${COLUMNS[table]} FROM ${table} WHERE ${scope} id = @id`).get({ line, id: change.id })
+  const found = prepared(db, `SELECT ${COLUMNS[table]} FROM ${table} WHERE ${scope} id = @id`).get({
+    line,
+    id: change.id,
+  })
   const before = found === undefined ? null : FROM_ROW[change.kind](found as Row)
 
   if (change.after === null) {
     if (found === undefined) throw unfit(change)
-    const { place } = prepared(db, `SELECT place FROM ${table} WHERE ${scope} id = @id`).get({ line, id: change.id }) as {
+    const { place } = prepared(db, `SELECT place FROM ${table} WHERE ${scope} id = @id`).get({
+      line,
+      id: change.id,
+    }) as {
       place: number
     }
     prepared(db, `DELETE FROM ${table} WHERE ${scope} id = @id`).run({ line, id: change.id })

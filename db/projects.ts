@@ -3,7 +3,18 @@
  * whole; what is opened is looked at before anything is written to it, and a file of a newer version, of another
  * program or with damage is left as it is.
  */
-import { accessSync, closeSync, constants, existsSync, lstatSync, openSync, readSync, renameSync, rmSync, statSync } from 'node:fs'
+import {
+  accessSync,
+  closeSync,
+  constants,
+  existsSync,
+  lstatSync,
+  openSync,
+  readSync,
+  renameSync,
+  rmSync,
+  statSync,
+} from 'node:fs'
 import { basename, dirname, join, resolve } from 'node:path'
 import type { Building } from '../app/model/building.ts'
 import { Fault } from '../app/model/faults.ts'
@@ -68,7 +79,11 @@ function refuseTarget(path: string): void {
   try {
     accessSync(folder, constants.W_OK)
   } catch (error) {
-    throw new Fault('file.unwritable', { file: path, detail: { reason: 'the folder cannot be written to' } }, { cause: error })
+    throw new Fault(
+      'file.unwritable',
+      { file: path, detail: { reason: 'the folder cannot be written to' } },
+      { cause: error },
+    )
   }
 }
 
@@ -98,7 +113,8 @@ function opened(db: Connection, path: string): OpenProject {
     path,
     read,
     write(run) {
-      if (db.readonly) throw new Fault('file.unwritable', { file: path, detail: { reason: 'it is open for reading only' } })
+      if (db.readonly)
+        throw new Fault('file.unwritable', { file: path, detail: { reason: 'it is open for reading only' } })
       try {
         return onFile(path, () => db.transaction(() => run(store)).immediate())
       } catch (error) {
@@ -121,7 +137,11 @@ function refuseForeign(path: string): void {
   try {
     handle = openSync(path, 'r')
   } catch (error) {
-    throw new Fault('file.unreadable', { file: path, detail: { reason: (error as NodeJS.ErrnoException).code ?? '' } }, { cause: error })
+    throw new Fault(
+      'file.unreadable',
+      { file: path, detail: { reason: (error as NodeJS.ErrnoException).code ?? '' } },
+      { cause: error },
+    )
   }
   try {
     readSync(handle, bytes, 0, bytes.length, 0)

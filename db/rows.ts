@@ -1,13 +1,5 @@
 /** Rows of the tables as entities of the model and back: NULL for what the building file leaves out, nothing else. */
-import type {
-  BookRow,
-  FrameNode,
-  GivenLevel,
-  Member,
-  Section,
-  Support,
-  SurveyPoint,
-} from '../app/model/building.ts'
+import type { BookRow, FrameNode, GivenLevel, Member, Section, Support, SurveyPoint } from '../app/model/building.ts'
 
 export type Row = Record<string, unknown>
 

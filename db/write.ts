@@ -66,17 +66,16 @@ export function writeStore(db: WriteDb, read: ReadStore): WriteStore {
     },
     accept(id, who, when, note) {
       const row = db.prepare("SELECT key, draft FROM round WHERE id = ? AND state = 'draft'").get(id) as
-        | { key: number; draft: string }
-        | undefined
+        { key: number; draft: string } | undefined
       if (!row) throw new Fault('draft.unknown', { value: id })
       const draft = JSON.parse(row.draft) as DraftRound
       freeze(db, row.key, { ...draft, ...(note ? { note } : {}) }, who, when)
       journal(when, who, `Accept round ${id}`)
     },
     correct(round, reason, who, when) {
-      const old = db.prepare("SELECT key, version, place FROM round WHERE id = ? AND state = 'accepted'").get(round.id) as
-        | { key: number; version: number; place: number }
-        | undefined
+      const old = db
+        .prepare("SELECT key, version, place FROM round WHERE id = ? AND state = 'accepted'")
+        .get(round.id) as { key: number; version: number; place: number } | undefined
       if (!old) throw new Fault('round.unknown', { value: round.id })
       db.prepare("UPDATE round SET state = 'superseded' WHERE key = ?").run(old.key)
       const { lastInsertRowid } = db
@@ -116,8 +115,7 @@ export function writeStore(db: WriteDb, read: ReadStore): WriteStore {
 
 function putDraft(db: WriteDb, draft: DraftRound, when: string): void {
   const same = db.prepare("SELECT key, state FROM round WHERE id = ? ORDER BY state = 'draft' DESC").get(draft.id) as
-    | { key: number; state: string }
-    | undefined
+    { key: number; state: string } | undefined
   if (same && same.state !== 'draft') throw new Fault('round.frozen', { value: draft.id })
   if (same) {
     db.prepare('UPDATE round SET date = ?, draft = ?, saved_at = ? WHERE key = ?').run(
@@ -199,7 +197,10 @@ function refuseIfRead(db: WriteDb, point: string): void {
 function refuseOpenReferences(db: WriteDb, changes: readonly Change[]): void {
   const open = db.pragma('foreign_key_check') as { table: string; parent: string }[]
   if (open.length)
-    throw new Fault('change.unfit', { value: `${open[0]!.table} without its ${open[0]!.parent}`, path: changes[0]?.kind })
+    throw new Fault('change.unfit', {
+      value: `${open[0]!.table} without its ${open[0]!.parent}`,
+      path: changes[0]?.kind,
+    })
 }
 
 /** Fills a new project with a building and its rounds, all accepted. */
@@ -220,7 +221,9 @@ export function fill(db: WriteDb, building: Building, rounds: readonly DraftRoun
   survey.points.forEach((point, i) => insert(db, 'point', point, i))
   for (const round of rounds) {
     putDraft(db, round, when)
-    const { key } = db.prepare("SELECT key FROM round WHERE id = ? AND state = 'draft'").get(round.id) as { key: number }
+    const { key } = db.prepare("SELECT key FROM round WHERE id = ? AND state = 'draft'").get(round.id) as {
+      key: number
+    }
     freeze(db, key, round, who, when)
   }
   if (survey.baseline !== undefined) db.prepare('UPDATE project SET baseline = ?').run(survey.baseline)

@@ -24,13 +24,20 @@ export function assessBuilding(building: Building, round?: string): Findings {
   return assessPrepared(prepare(building), round)
 }
 
-/** As assessBuilding, of a building already prepared. */
-export function assessPrepared(prepared: Prepared, round?: string): Findings {
+/** As assessBuilding, of a building already prepared; `before` is told of each round, and may stop the work by throwing. */
+export function assessPrepared(
+  prepared: Prepared,
+  round?: string,
+  before: (done: number, of: number, id: string) => void = () => undefined,
+): Findings {
   const { building } = prepared
   const { baseline, rounds } = building.survey
   if (round !== undefined) roundOf(prepared, round)
   const chosen = byDate(rounds).filter((r) => r.id !== baseline && (round === undefined || r.id === round))
-  const found = chosen.map((r) => assessRound(prepared, r.id))
+  const found = chosen.map((r, i) => {
+    before(i, chosen.length, r.id)
+    return assessRound(prepared, r.id)
+  })
   const isRed = found.some((r) => r.status === 'red')
   return {
     format: 'levelstead-findings',

@@ -26,6 +26,8 @@ export interface RoundView {
 export interface ProjectView {
   /** Where the project file is. */
   path: string
+  /** The file may not be written to. */
+  read_only: boolean
   /** The description and the accepted rounds in force. */
   building: Building
   /** All versions of all rounds, drafts included, by date. */
@@ -69,20 +71,14 @@ export interface PdfView {
   pages: number
 }
 
-export interface VerifyRow {
-  source: string
-  check: string
-  expected: number
-  found: number
-  unit: string
-  tolerance: number
-  agrees: boolean
-}
+export type { VerifyRow } from '../model/verification.ts'
 
 export interface ImportedView {
   added: string[]
   /** How each column of a readings table was read. */
   columns?: Record<string, string>
+  /** What was taken for granted, a sentence each. */
+  notes?: string[]
 }
 
 export interface FolderView {
@@ -95,8 +91,8 @@ export interface FolderView {
 
 export interface AboutView {
   version: string
-  /** 'electron' or 'browser': which shell serves the window. */
-  shell: 'electron' | 'browser'
+  /** Which shell asks. */
+  shell: 'electron' | 'browser' | 'command line'
   home: string
   /** Project opened by the command line, where there is one. */
   opened: string | null

@@ -125,7 +125,7 @@ export function nodeFiles(): Files {
     readBytes,
     writeBytes(path, bytes) {
       try {
-        writeWhole(path, bytes)
+        writeWhole(path, typeof bytes === 'string' ? Buffer.from(bytes) : bytes)
       } catch (error) {
         throw systemFault(error, path, 'writing')
       }

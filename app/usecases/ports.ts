@@ -71,8 +71,8 @@ export interface Files {
   list(folder: string): FolderView
   exists(path: string): boolean
   readBytes(path: string): Uint8Array
-  /** Writes beside the target first and renames, so that half a file never stands under the name. */
-  writeBytes(path: string, bytes: Uint8Array): void
+  /** Writes beside the target first and renames, so that half a file never stands under the name. Text is UTF-8. */
+  writeBytes(path: string, bytes: Uint8Array | string): void
 }
 
 export interface Clock {

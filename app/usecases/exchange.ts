@@ -1,0 +1,53 @@
+/** Building files and readings tables in and out. Nothing is written where anything of what comes in is at fault. */
+import { prepare } from '../assess/prepare.ts'
+import type { ImportedView, ProjectView } from '../contract/views.ts'
+import type { Building } from '../model/building.ts'
+import { faultsOf, InputFault } from '../model/faults.ts'
+import { readBuilding } from '../model/read-building.ts'
+import { readReadings } from '../model/read-readings.ts'
+import { writeBuilding } from '../model/write-building.ts'
+import type { Context, WriteStore } from './ports.ts'
+import { open } from './project.ts'
+import { openProject } from './project-view.ts'
+import { addRound } from './rounds.ts'
+
+/** A building file as a building whose frames can be solved. Throws an InputFault that names the file. */
+export function soundBuilding(bytes: Uint8Array, file: string): Building {
+  const building = readBuilding(bytes, file)
+  try {
+    prepare(building)
+  } catch (error) {
+    const faults = faultsOf(error)
+    if (!faults) throw error
+    throw new InputFault(
+      faults.map(({ code, place }) => ({ code, place: { file, ...pathOf(building, place), ...place } })),
+    )
+  }
+  return building
+}
+
+/** Where in the file a fault of a frame line stands. */
+function pathOf(building: Building, place: { element?: { id: string; kind: string }; value?: unknown }) {
+  const { element } = place
+  const index = element?.kind === 'line' ? building.frame_lines.findIndex((line) => line.id === element.id) : -1
+  return index < 0 ? {} : { path: `frame_lines[${index}]`, value: place.value ?? element!.id }
+}
+
+export function importBuilding({ from, to }: { from: string; to: string }, context: Context): ProjectView {
+  const building = soundBuilding(context.files.readBytes(from), from)
+  context.progress(1, 2, 'The building file is read')
+  context.projects.create(to, building, building.survey.rounds, context.clock.who(), context.clock.now())
+  return open({ path: to }, context)
+}
+
+export function exportBuilding({ to }: { to: string }, context: Context): { written: string; drafts: string[] } {
+  const { read } = openProject(context)
+  context.files.writeBytes(to, writeBuilding(read.building()))
+  return { written: to, drafts: read.rounds().flatMap((r) => (r.state === 'draft' ? [r.id] : [])) }
+}
+
+export function logReadings({ from }: { from: string }, context: Context, store: WriteStore): ImportedView {
+  const { rounds, columns, notes } = readReadings(context.files.readBytes(from), store.building(), from)
+  for (const round of rounds) addRound(store, round, context.clock.who(), context.clock.now())
+  return { added: rounds.map((r) => r.id), columns, notes }
+}
