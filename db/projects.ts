@@ -179,10 +179,16 @@ function isWritable(path: string): boolean {
   }
 }
 
+/** A project of today has nothing yet that a copy would save. */
+function isOfToday(db: Connection, now: string): boolean {
+  const { created_at } = db.prepare('SELECT created_at FROM project').get() as { created_at: string }
+  return created_at.slice(0, 10) === now.slice(0, 10)
+}
+
 /** A copy that cannot be made (a full disk, a folder that is not ours) must not keep anybody from their project. */
 function copyQuietly(db: Connection, path: string, now: string): void {
   try {
-    copyOfTheDay(db, path, now)
+    if (!isOfToday(db, now)) copyOfTheDay(db, path, now)
   } catch (error) {
     if (!(error instanceof Error)) throw error
     process.emitWarning(`No copy of ${path} was made today: ${error.message}`, { code: 'LEVELSTEAD_COPY' })

@@ -80,7 +80,7 @@ function writeWhole(path: string, bytes: Uint8Array): void {
   const handle = openSync(beside, 'wx', before ? before.mode & 0o777 : 0o666)
   try {
     try {
-      for (let done = 0; done < bytes.length; ) done += writeSync(handle, bytes, done)
+      for (let done = 0; done < bytes.length;) done += writeSync(handle, bytes, done)
       fsyncSync(handle)
     } finally {
       closeSync(handle)
@@ -105,7 +105,12 @@ function listFolder(folder: string): FolderView {
     }
     const order = new Intl.Collator('en', { numeric: true }).compare
     const parent = dirname(path)
-    return { folder: path, parent: parent === path ? null : parent, folders: folders.sort(order), files: files.sort(order) }
+    return {
+      folder: path,
+      parent: parent === path ? null : parent,
+      folders: folders.sort(order),
+      files: files.sort(order),
+    }
   } catch (error) {
     throw systemFault(error, folder, 'reading')
   }

@@ -1,0 +1,4 @@
+/** What `levelstead` runs in a terminal. */
+import { runCommandLine } from './command-line.ts'
+
+process.exitCode = await runCommandLine(process.argv.slice(2))
