@@ -10,8 +10,7 @@ export function errorLine(record: FaultRecord, file?: string): string {
   const parts = ['error']
   if (name !== undefined) parts.push(name)
   if (place.path !== undefined && place.path !== '') parts.push(place.path)
-  if (place.value !== undefined && place.path !== undefined) parts.push(`value ${shown(place.value)}`)
-  else if (record.code === 'key.missing') parts.push('value missing')
+  if (place.path !== undefined) parts.push(`value ${place.value === undefined ? 'missing' : shown(place.value)}`)
   const plain = what.startsWith(`${place.path}: `) ? what.slice(place.path!.length + 2) : what
   const told = `${parts.join(': ')}: ${plain.replace(/\.$/, '')}; ${todo}`
   // What a file holds must not break the line or steer the terminal.

@@ -191,7 +191,7 @@ export const inputMessages = {
     todo: () => 'Give both in metres; one of them looks like millimetres.',
   },
   'triggers.reversed': {
-    what: (p) => `${subject(p)}: amber ${p.detail?.amber} is above red ${p.detail?.red}.`,
+    what: (p) => `Amber ${p.detail?.amber} is above red ${p.detail?.red}.`,
     kept: AS_WAS,
     todo: () => 'Give amber the lower value of the two.',
   },
@@ -280,6 +280,11 @@ export const inputMessages = {
     kept: READINGS,
     todo: (p) =>
       p.detail?.nearest === undefined ? 'Take the column out.' : `Head it ${String(p.detail.nearest)}, or take it out.`,
+  },
+  'column.unit': {
+    what: (p) => `The column ${shown(p.value)} is in another unit than ${p.detail?.column}.`,
+    kept: READINGS,
+    todo: (p) => `Convert its values, and head it ${p.detail?.column}.`,
   },
   'column.repeated': {
     what: (p) => `Two columns are headed for ${p.detail?.column}: ${shown(p.value)} is the second.`,

@@ -33,7 +33,11 @@ export function checkBook(
   const sd_mm_per_setup = book.maybeNumber('sd_mm_per_setup', INSTRUMENT)
   const hasPerSetup = book.has('sd_mm_per_setup')
   if (!hasPerSetup && !book.has('sd_mm_per_sqrt_km'))
-    book.faults.add('book.sdless', { path: book.path, element: book.element!, detail: { round: within } })
+    book.faults.add('book.sdless', {
+      path: book.at('sd_mm_per_sqrt_km'),
+      element: book.element!,
+      detail: { round: within },
+    })
 
   const booked: BookedRow[] = []
   book.list('rows', (value, path) => {

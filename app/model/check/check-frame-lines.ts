@@ -127,7 +127,7 @@ function checkLength(
     return NaN
   }
   const length = Math.hypot(to.x_m - from.x_m, to.z_m - from.z_m)
-  const place = { path: member.path, value: length, element: member.element!, detail: names }
+  const place = { path: member.path, value: rounded(length), element: member.element!, detail: names }
   if (length === 0) member.faults.add('member.lengthless', place)
   else if (length > LONGEST_M) member.faults.add('member.long', place)
   else return length

@@ -28,9 +28,10 @@ export class FaultsFound {
   }
 }
 
-/** A place holds plain values only: it crosses boundaries and stands in one line. */
+const LONGEST = 200
+
+/** A place crosses boundaries and stands in one line: it holds no whole part of a file. */
 function shortened(value: unknown): unknown {
-  if (Array.isArray(value)) return `a list of ${value.length}`
-  if (typeof value === 'object' && value !== null) return 'an object'
-  return value
+  if (typeof value !== 'object' || value === null || JSON.stringify(value).length <= LONGEST) return value
+  return Array.isArray(value) ? `a list of ${value.length}` : 'an object'
 }

@@ -19,6 +19,8 @@ const COLUMNS = [...ALWAYS, ...OF_LEVELS, ...OF_BOOK]
 /** Columns that people keep beside their readings; they are left out and told so. */
 const REMARKS = /^(remarks?|notes?|comments?|observers?|instruments?|weather|time|temperature)$/i
 
+const UNIT = /[\s_-]*[([]?(mm|cm|km|m|ft|in)[)\]]?$/i
+
 /** The heading, or undefined where it is none; faults are noted either way. */
 export function headingOf(row: readonly string[], path: string, faults: FaultsFound): Heading | undefined {
   const before = faults.all.length
@@ -38,6 +40,8 @@ export function headingOf(row: readonly string[], path: string, faults: FaultsFo
     if (column === null) noteUntaken(row[i]!, path, place, taken, faults)
   })
   const kind = kindOf(place, path, row, faults)
+  // A heading not taken may be that of the column that is missing: told once.
+  if (faults.all.length > before) return undefined
   for (const column of neededIn(kind, place))
     if (!place.has(column)) faults.add('column.missing', { path, value: column })
   return faults.all.length > before ? undefined : { kind, place, headings: row, taken }
@@ -51,9 +55,10 @@ function noteUntaken(
   faults: FaultsFound,
 ): void {
   if (heading === '') return
-  const [again] = columnsNamed([heading])
+  const [again, withoutUnit] = [heading, heading.replace(UNIT, '')].map((text) => columnsNamed([text])[0])
   if (again) faults.add('column.repeated', { path, value: heading, detail: { column: again } })
   else if (REMARKS.test(heading)) taken[heading] = 'left out'
+  else if (withoutUnit) faults.add('column.unit', { path, value: heading, detail: { column: withoutUnit } })
   else {
     const free = COLUMNS.filter((column) => !place.has(column))
     faults.add('column.unknown', { path, value: heading, detail: faults.nearest(heading, free) })
