@@ -11,7 +11,7 @@ export function errorLine(record: FaultRecord, file?: string): string {
   if (name !== undefined) parts.push(name)
   if (place.path !== undefined && place.path !== '') parts.push(place.path)
   if (place.path !== undefined) parts.push(`value ${place.value === undefined ? 'missing' : shown(place.value)}`)
-  const plain = what.startsWith(`${place.path}: `) ? what.slice(place.path!.length + 2) : what
+  const plain = place.path && what.startsWith(`${place.path}: `) ? what.slice(place.path.length + 2) : what
   const told = `${parts.join(': ')}: ${plain.replace(/\.$/, '')}; ${todo}`
   // What a file holds must not break the line or steer the terminal.
   return told.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, ' ')

@@ -23,6 +23,11 @@ export function list(names: unknown): string {
   return all.length > 4 ? `${all.slice(0, 3).join(', ')} and ${all.length - 3} more` : all.join(', ')
 }
 
+/** Words in a sentence, every one of them. */
+export function all(names: unknown): string {
+  return Array.isArray(names) ? names.map(String).join(', ') : shown(names)
+}
+
 /** The element and key that a value stands at: `Section beam-300x600: E_GPa`. */
 export function subject(place: Place): string {
   if (place.path?.startsWith('row ')) return `R${place.path.slice(1)}`

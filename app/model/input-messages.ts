@@ -1,5 +1,5 @@
 /** Sentences of faults of files, keys, values and tables that are read in. */
-import { list, meant, NOTHING_WRITTEN, shown, subject, type FaultMessage } from './fault-words.ts'
+import { all, list, meant, NOTHING_WRITTEN, shown, subject, type FaultMessage } from './fault-words.ts'
 
 const AS_WAS = 'The description is as it was.'
 const READINGS = 'The readings are as they were.'
@@ -64,7 +64,7 @@ export const inputMessages = {
     kept: AS_WAS,
     todo: (p) =>
       p.detail?.nearest === undefined
-        ? `Take it out; the keys here are ${(p.detail?.keys as readonly string[] | undefined)?.join(', ')}.`
+        ? `Take it out; the keys here are ${all(p.detail?.keys)}.`
         : `Write it as ${String(p.detail.nearest)}, or take it out.`,
   },
   'key.missing': {
@@ -135,7 +135,7 @@ export const inputMessages = {
   'choice.unknown': {
     what: (p) => `${subject(p)} is ${shown(p.value)}, which it cannot be.${meant(p)}`,
     kept: AS_WAS,
-    todo: (p) => `Write one of ${(p.detail?.choices as readonly string[] | undefined)?.join(', ')}.`,
+    todo: (p) => `Write one of ${all(p.detail?.choices)}.`,
   },
   'list.empty': {
     what: (p) => `${subject(p)} has no entry.`,
@@ -313,7 +313,7 @@ export const inputMessages = {
   },
   'change.unfit': {
     what: (p) =>
-      `The ${p.element?.kind ?? 'description'} ${p.element?.id ?? ''} is not as it was when the change was made.`,
+      `${p.element?.id ? `The ${p.element.kind} ${p.element.id}` : 'The description'} is not as it was when the change was made.`,
     kept: 'The building is as it was.',
     todo: () => 'Look at it as it is now, and make the change again.',
   },

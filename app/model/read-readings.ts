@@ -26,6 +26,7 @@ export interface Readings {
 export function readReadings(input: string | Uint8Array, building: Pick<Building, 'survey'>, file?: string): Readings {
   const faults = new FaultsFound(file)
   const rows = rowsOf(input, file, faults)
+  if (rows.length === 0) faults.add('file.empty', {})
   const heading = rows[0] && headingOf(rows[0].cells, `row ${rows[0].number}`, faults)
   if (!heading) throw new InputFault(faults.all)
   if (rows.length === 1)
@@ -63,7 +64,10 @@ function rowsOf(input: string | Uint8Array, file: string | undefined, faults: Fa
   const { rows, openQuote } = delimitedRows(text, separatorOf(text))
   if (openQuote !== undefined) faults.add('quote.open', { path: `row ${openQuote}`, value: rows.at(-1)!.join(', ') })
   if (faults.all.length > 0) throw new InputFault(faults.all)
-  return rows.map((cells, i) => ({ number: i + 1, cells })).filter(({ cells }) => cells.some((cell) => cell !== ''))
+  const isHint = SEPARATOR_HINT.test(text)
+  return rows
+    .map((cells, i) => ({ number: i + 1, cells }))
+    .filter(({ cells, number }) => !(isHint && number === 1) && cells.some((cell) => cell !== ''))
 }
 
 /** A first line by which spreadsheets tell each other what separates. */

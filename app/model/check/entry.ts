@@ -58,8 +58,8 @@ export class Entry {
     }
     const entry = new Entry(faults, path, value as Record<string, unknown>, element)
     for (const key of Object.keys(value)) {
-      if (keys.includes(key)) continue
-      const free = keys.filter((known) => !Object.hasOwn(value, known))
+      if (keys.includes(key) || !entry.has(key)) continue
+      const free = keys.filter((known) => !entry.has(known))
       const near = faults.nearest(key, free)
       if (near.nearest !== undefined) entry.misspelt.add(near.nearest)
       entry.fault('key.unknown', key, { key, keys, ...near })
@@ -71,8 +71,9 @@ export class Entry {
     return pathStep(this.path, key)
   }
 
+  /** A key of a value in memory that holds undefined is not there, as in the file that it would be written to. */
   has(key: string): boolean {
-    return Object.hasOwn(this.raw, key)
+    return Object.hasOwn(this.raw, key) && this.raw[key] !== undefined
   }
 
   value(key: string): unknown {
