@@ -165,3 +165,24 @@ describe('a round by itself', () => {
     }
   })
 })
+
+describe('a level book', () => {
+  test('may turn on points that the survey does not describe, and begin and close on one', () => {
+    const rows = [
+      { point: 'peg', back_m: 1.4 },
+      { point: 'BM1', mid_m: 1.3 },
+      { point: 'S-A1', mid_m: 1.0 },
+      { point: 'TP1', fore_m: 1.1 },
+      { point: 'TP1', back_m: 1.2 },
+      { point: 'S-A2', mid_m: 1.1 },
+      { point: 'peg', fore_m: 1.5 },
+    ]
+    const building = with_((b) => (b.survey.rounds[1]!.book = { sd_mm_per_setup: 0.3, rows }))
+    expect(checkBuilding(building)).toEqual(building)
+    const misspelt = with_((b) => {
+      const own = rows.map((row) => (row.point === 'S-A2' ? { ...row, point: 'S-A3' } : row))
+      b.survey.rounds[1]!.book = { sd_mm_per_setup: 0.3, rows: own }
+    })
+    expect(placesOf(() => checkBuilding(misspelt))).toEqual(['survey.rounds[1].book.rows[5].point value "S-A3"'])
+  })
+})

@@ -107,20 +107,21 @@ function noteOrder(faults: Entry['faults'], booked: readonly BookedRow[], round:
   }
 }
 
-/** A point that the survey does not describe can only be a change point: one with a foresight and a backsight. */
+/** A point that the survey does not describe can only be one that is turned on: read from one setup, and the next begun on it. */
 function noteUnknown(
   faults: Entry['faults'],
   booked: readonly BookedRow[],
   points: ReadonlyMap<string, SurveyPoint>,
 ): void {
-  const turned = new Set<string>()
   const sighted = new Set<string>()
+  const begun = new Set<string>()
   for (const { row } of booked) {
     if (row.fore_m !== undefined || row.mid_m !== undefined) sighted.add(row.point)
-    if (row.back_m !== undefined && sighted.has(row.point)) turned.add(row.point)
+    if (row.back_m !== undefined) begun.add(row.point)
   }
   for (const { row, path, element } of booked) {
-    if (row.point.trim() === '' || points.has(row.point) || turned.has(row.point)) continue
+    if (row.point.trim() === '' || points.has(row.point)) continue
+    if (sighted.has(row.point) && begun.has(row.point)) continue
     const detail = { turned: 'no', ...faults.nearest(row.point, points.keys()) }
     faults.add('point.unknown', { path: `${path}.point`, value: row.point, element, detail })
   }

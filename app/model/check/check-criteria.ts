@@ -42,7 +42,7 @@ function checkTriggers(criteria: Entry, name: (typeof TRIGGERS)[number]): Partia
     name === 'angular_distortion'
       ? 'Give it in radians, as 0.002 for 1/500.'
       : 'Give it as a fraction, as 0.25 and not as 25.'
-  const rule: NumberRule = { above: 0, most: name === 'angular_distortion' ? 0.2 : 10, remedy }
+  const rule: NumberRule = { above: 0, most: name === 'angular_distortion' ? 1 : 10, remedy }
   const given = filled({ amber: entry.maybeNumber('amber', rule), red: entry.maybeNumber('red', rule) })
   const { amber, red } = criteriaOf({ criteria: { [name]: given } })[name]
   if (amber > red) entry.fault('triggers.reversed', entry.has('amber') ? 'amber' : 'red', { red, amber })
