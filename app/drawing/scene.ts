@@ -7,7 +7,7 @@ import type { Status } from '../model/findings.ts'
 
 /** What a primitive stands for; the theme gives each its ink. */
 export type Role =
-  | 'member' // a member in ink
+  | 'member' // a member of which nothing is said: none assessed, or no capacity given
   | 'member-green'
   | 'member-amber'
   | 'member-red'
@@ -40,6 +40,11 @@ export type Role =
   | 'trigger-amber'
   | 'trigger-red'
   | 'load'
+  | 'settlement-disc' // a support on the plan, its area by its settlement
+  | 'column' // a column on the plan
+  | 'text-moment'
+  | 'text-settlement'
+  | 'paper' // covers what lies beneath, so that a text on it can be read
 
 /** The thing in the building that a primitive shows; picking it selects that thing. */
 export type Target =

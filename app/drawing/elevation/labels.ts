@@ -1,0 +1,169 @@
+/** Figures on the frame: the flagged members' share of capacity at a status mark, induced moments at their ends. */
+import { byWorst, type MemberFinding } from '../../model/findings.ts'
+import { moment } from '../../model/numbers.ts'
+import { placeLabels, type Box, type Wanted } from '../place-labels.ts'
+import type { Point, Primitive, Role } from '../scene.ts'
+import { baselineFor, between, mark, text, type Extra } from '../shapes.ts'
+import { MARK, SMALL, TEXT } from '../sizes.ts'
+import { CAP_HEIGHT, textWidth } from '../text-width.ts'
+import { pointOn, type Curve } from './deformed.ts'
+import type { DrawnFrame, DrawnMember } from './frame.ts'
+import type { MomentDiagram } from './moments.ts'
+import { memberTarget, wholePercent } from './members.ts'
+
+interface Label extends Wanted {
+  words: string
+  role: Role
+  size: number
+  extra: Extra
+}
+
+/** How much of the largest moment an end must have to be given its figure. */
+const WORTH = 0.3
+
+export function drawLabels(
+  frame: DrawnFrame,
+  diagrams: readonly MomentDiagram[],
+  curves: readonly Curve[],
+  within: Box,
+): Primitive[] {
+  const flagged = flaggedMembers(frame)
+  const marks = flagged.map(({ drawn, finding }) => markOf(frame, drawn, finding))
+  const taken = flagged.map(({ drawn }) => around(between(drawn.from, drawn.to, 0.5), MARK))
+  const segments = frame.members.map((m) => [m.from, m.to] as const)
+  const wanted = [
+    ...flagged.flatMap(({ drawn, finding }) => fractionLabel(frame, drawn, finding)),
+    ...momentLabels(frame, diagrams),
+  ]
+  const places = placeLabels(wanted, {
+    within,
+    boxes: taken,
+    segments,
+    soft: [...curves.flatMap(segmentsOf), ...diagrams.map((d) => [d.fromTip, d.toTip] as const)],
+  })
+  return [...marks, ...textsAt(wanted, places)]
+}
+
+/** Names of sections along the members of a frame that is only described. */
+export function drawSectionNames(frame: DrawnFrame, within: Box): Primitive[] {
+  const wanted = frame.members.flatMap(({ member, from, to, length }): Label[] => {
+    const width = textWidth(member.section, SMALL)
+    const isFlat = Math.abs(to[0] - from[0]) > 2 * Math.abs(to[1] - from[1])
+    const middle = between(from, to, 0.5)
+    if (isFlat && width > length - 3) return []
+    const places: Point[] = isFlat
+      ? [
+          [middle[0], middle[1] - 2.2],
+          [middle[0], middle[1] + 2.2],
+        ]
+      : [
+          [middle[0] + width / 2 + 1.4, middle[1]],
+          [middle[0] - width / 2 - 1.4, middle[1]],
+        ]
+    return [labelOf(member.section, 'text-quiet', SMALL, places, { target: memberTarget(frame.line.id, member.id) })]
+  })
+  const segments = frame.members.map((m) => [m.from, m.to] as const)
+  return textsAt(wanted, placeLabels(wanted, { within, segments }))
+}
+
+function textsAt(labels: readonly Label[], boxes: readonly (Box | undefined)[]): Primitive[] {
+  return labels.flatMap(({ words, role, size, extra }, i) => {
+    const box = boxes[i]
+    if (!box) return []
+    return [
+      text(role, [box.x + box.width / 2, baselineFor(box.y + box.height / 2, size)], words, size, 'middle', extra),
+    ]
+  })
+}
+
+function labelOf(words: string, role: Role, size: number, places: readonly Point[], extra: Extra): Label {
+  const weight = role === 'text-strong' ? 'medium' : 'regular'
+  return { words, role, size, extra, places, width: textWidth(words, size, weight), height: size * CAP_HEIGHT }
+}
+
+/** Members at amber or red, the worst first. */
+function flaggedMembers(frame: DrawnFrame): { drawn: DrawnMember; finding: MemberFinding }[] {
+  const drawnOf = new Map(frame.members.map((m) => [m.member.id, m]))
+  return (frame.finding?.members ?? [])
+    .filter((m) => m.status === 'amber' || m.status === 'red')
+    .flatMap((finding) => {
+      const drawn = drawnOf.get(finding.member)
+      return drawn ? [{ drawn, finding }] : []
+    })
+    .sort((a, b) => byWorst(a.finding.status, b.finding.status) || severity(b.finding) - severity(a.finding))
+}
+
+function severity(m: MemberFinding): number {
+  return Math.max(m.induced_fraction ?? 0, m.utilisation ?? 0)
+}
+
+function markOf(frame: DrawnFrame, { from, to, length, member }: DrawnMember, { status }: MemberFinding): Primitive {
+  const size = Math.min(MARK, Math.max(1, length * 0.3))
+  return mark(status, between(from, to, 0.5), size, { target: memberTarget(frame.line.id, member.id) })
+}
+
+function fractionLabel(frame: DrawnFrame, { from, to, member }: DrawnMember, finding: MemberFinding): Label[] {
+  if (finding.induced_fraction === undefined) return []
+  const words = wholePercent(finding.induced_fraction)
+  const width = textWidth(words, TEXT, 'medium')
+  const [x, y] = between(from, to, 0.5)
+  const up = TEXT * 0.36 + 1.7
+  const side = width / 2 + 2
+  const isFlat = Math.abs(to[0] - from[0]) >= Math.abs(to[1] - from[1])
+  const places: Point[] = isFlat
+    ? [
+        [x, y - up],
+        [x, y + up],
+        [x + side, y - up],
+        [x - side, y - up],
+        [x + side, y + up],
+        [x - side, y + up],
+      ]
+    : [
+        [x + side, y],
+        [x - side, y],
+        [x + side, y - up],
+        [x - side, y - up],
+        [x + side, y + up],
+        [x - side, y + up],
+      ]
+  return [labelOf(words, 'text-strong', TEXT, places, { target: memberTarget(frame.line.id, member.id) })]
+}
+
+/** The figure of each end moment that matters, just beyond the tip of its ordinate. */
+function momentLabels(frame: DrawnFrame, diagrams: readonly MomentDiagram[]): Label[] {
+  const ends = diagrams.flatMap(({ drawn, finding, fromTip, toTip }) => [
+    { drawn, value: finding.moment_from_kNm, foot: drawn.from, tip: fromTip, other: drawn.to, end: 'from' as const },
+    { drawn, value: finding.moment_to_kNm, foot: drawn.to, tip: toTip, other: drawn.from, end: 'to' as const },
+  ])
+  const most = Math.max(0, ...ends.map((e) => Math.abs(e.value)))
+  return ends
+    .filter((e) => Math.abs(e.value) >= WORTH * most)
+    .sort((a, b) => Math.abs(b.value) - Math.abs(a.value))
+    .map(({ drawn, value, foot, tip, other, end }) => {
+      const words = moment(Math.abs(value))
+      const width = textWidth(words, SMALL)
+      const length = Math.hypot(tip[0] - foot[0], tip[1] - foot[1]) || 1
+      const out: Point = [(tip[0] - foot[0]) / length, (tip[1] - foot[1]) / length]
+      const inward: Point = [(other[0] - foot[0]) / drawn.length, (other[1] - foot[1]) / drawn.length]
+      const reach = (d: Point) => (Math.abs(d[0]) * width + Math.abs(d[1]) * SMALL * CAP_HEIGHT) / 2
+      const places = [1, 1.8, 0.2, 2.6].flatMap((along) =>
+        [0.7, 1.6].map((beyond): Point => {
+          const o = reach(out) + beyond
+          const i = along * (reach(inward) + 0.7)
+          return [tip[0] + out[0] * o + inward[0] * i, tip[1] + out[1] * o + inward[1] * i]
+        }),
+      )
+      const target = { ...memberTarget(frame.line.id, drawn.member.id), end } as Extra['target']
+      return labelOf(words, 'text-moment', SMALL, places, { target })
+    })
+}
+
+function segmentsOf(curve: Curve): (readonly [Point, Point])[] {
+  const points = [0, 0.25, 0.5, 0.75, 1].map((t) => pointOn(curve, t))
+  return points.slice(1).map((p, i) => [points[i]!, p] as const)
+}
+
+function around([x, y]: Point, size: number): Box {
+  return { x: x - size / 2, y: y - size / 2, width: size, height: size }
+}
