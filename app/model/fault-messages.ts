@@ -1,12 +1,14 @@
 /** The catalogue of fault sentences by code. A test goes through all codes and fails on a missing one. */
 import { list, NOTHING_WRITTEN, shown, subject, type FaultMessage } from './fault-words.ts'
 import { inputMessages } from './input-messages.ts'
+import { readingsMessages } from './readings-messages.ts'
 import { projectMessages } from './project-messages.ts'
 
 export { shown, type FaultMessage } from './fault-words.ts'
 
 export const catalogue = {
   ...inputMessages,
+  ...readingsMessages,
   ...projectMessages,
   'argument.missing': {
     what: (p) => `${shown(p.value)} needs ${p.path ?? 'a file'}.`,
