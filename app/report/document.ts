@@ -4,6 +4,7 @@ import { CAUTION_LINE } from '../model/cautions.ts'
 import { MARGIN, POINTS, type ReportInput } from './input.ts'
 import { drawings } from './sections/drawings.ts'
 import { flagged } from './sections/flagged.ts'
+import { headroom } from './sections/headroom.ts'
 import { ledgers } from './sections/ledgers.ts'
 import { levelBook } from './sections/level-book.ts'
 import { howSure, measured } from './sections/measured.ts'
@@ -68,6 +69,7 @@ export function reportDocument(input: ReportInput): TDocumentDefinitions {
       ...measured(input),
       ...howSure(input),
       ...drawings(input),
+      ...headroom(input),
       ...ledgers(input),
       ...flagged(input),
       ...method(input),

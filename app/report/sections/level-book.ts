@@ -10,7 +10,10 @@ export function levelBook({ building, round }: ReportInput): Content[] {
   const view = bookView(building, round)
   return [
     { text: 'Appendix: level book', style: 'heading', pageBreak: 'before' },
-    { text: `Round ${round.id}, ${round.date}. Readings in m as booked; reduced level by height of collimation; adjusted level and its standard deviation from the least-squares adjustment.`, style: 'body' },
+    {
+      text: `Round ${round.id}, ${round.date}. Readings in m as booked; reduced level by height of collimation; adjusted level and its standard deviation from the least-squares adjustment.`,
+      style: 'body',
+    },
     table(
       [
         { heading: 'point', width: '*' },
