@@ -9,7 +9,7 @@ import { Fault, faultsOf, InputFault } from '../model/faults.ts'
 import { soundBuilding } from '../usecases/exchange.ts'
 import { dispatch } from '../usecases/handlers.ts'
 import type { Context, Projects, Session } from '../usecases/ports.ts'
-import { normalQuantile } from '../../solver/index.ts'
+import { intervalFactor } from '../assess/confidence.ts'
 import { summary } from './assess-summary.ts'
 import { buildingProject } from './building-project.ts'
 import { readArguments, type Given } from './cli-arguments.ts'
@@ -97,7 +97,7 @@ const COMMAND: Record<CommandName, (given: Given) => Promise<number>> = {
       else context.files.writeBytes(json, text)
     }
     close()
-    const text = summary(findings, normalQuantile(0.5 + confidence / 2))
+    const text = summary(findings, intervalFactor(confidence))
     if (json === '-') tell(text)
     else print(text)
     if (typeof json === 'string' && json !== '-') tell(`Wrote ${json}.`)
