@@ -2,6 +2,11 @@
 import { list, NOTHING_WRITTEN, shown, type FaultMessage } from './fault-words.ts'
 
 export const projectMessages = {
+  'core.lost': {
+    what: () => 'The program behind this window does not answer.',
+    kept: 'Everything that was entered before is in the file.',
+    todo: () => 'Start Levelstead again; the file opens as it was.',
+  },
   'draft.unknown': {
     what: (p) => `There is no draft of a round ${shown(p.value)}.`,
     kept: NOTHING_WRITTEN,
