@@ -1,0 +1,118 @@
+/**
+ * The table on which a building is described: the part that lies open, the sheet that is shown, and what is picked
+ * on it. It makes edits from the building as it is now; whether an edit holds is for the core to say.
+ */
+import { getContext, setContext, tick } from 'svelte'
+import type { Missing, MissingPart } from '../../app/assess/missing.ts'
+import type { Building, FrameLine, Member } from '../../app/model/building.ts'
+import type { Edit } from '../../app/model/changes.ts'
+import type { MemberRef } from '../../app/model/edits/refs.ts'
+
+export type DescribePart = 'building' | 'grid' | 'sections' | 'lines' | 'members' | 'points' | 'criteria'
+
+/** Which part of the place holds what is missing. */
+const PART_OF: Record<MissingPart, DescribePart> = {
+  grid: 'grid',
+  sections: 'sections',
+  lines: 'lines',
+  members: 'members',
+  loads: 'members',
+  capacities: 'members',
+  points: 'points',
+  rounds: 'points',
+}
+
+export class Desk {
+  part = $state<DescribePart>('grid')
+  /** Name of the frame line whose elevation is shown; null is the plan. */
+  sheet = $state<string | null>(null)
+  #picked = $state.raw<readonly MemberRef[]>([])
+  #supports = $state.raw<readonly string[]>([])
+  readonly #building: () => Building
+  readonly #send: (edit: Edit) => Promise<void>
+
+  constructor(building: () => Building, send: (edit: Edit) => Promise<void>) {
+    this.#building = building
+    this.#send = send
+  }
+
+  get building(): Building {
+    return this.#building()
+  }
+
+  /** The frame line that is shown or, on the plan, the first one. */
+  get line(): FrameLine | undefined {
+    const { frame_lines } = this.building
+    return frame_lines.find((line) => line.id === this.sheet) ?? frame_lines[0]
+  }
+
+  /** Members picked that are still there. */
+  get picked(): readonly MemberRef[] {
+    return this.#picked.filter((ref) => this.member(ref))
+  }
+
+  set picked(refs: readonly MemberRef[]) {
+    this.#picked = refs
+  }
+
+  /** Supports picked, in the order in which they were, that are still there. */
+  get supports(): readonly string[] {
+    return this.#supports.filter((id) => this.building.supports.some((support) => support.id === id))
+  }
+
+  set supports(ids: readonly string[]) {
+    this.#supports = ids
+  }
+
+  member(ref: MemberRef): Member | undefined {
+    return this.building.frame_lines.find((line) => line.id === ref.line)?.members.find((m) => m.id === ref.id)
+  }
+
+  isPicked(ref: MemberRef): boolean {
+    return this.#picked.some((p) => p.line === ref.line && p.id === ref.id)
+  }
+
+  toggle(ref: MemberRef): void {
+    this.picked = this.isPicked(ref)
+      ? this.picked.filter((p) => p.line !== ref.line || p.id !== ref.id)
+      : [...this.picked, ref]
+  }
+
+  toggleSupport(id: string): void {
+    this.supports = this.supports.includes(id) ? this.supports.filter((s) => s !== id) : [...this.supports, id]
+  }
+
+  /** Makes an edit and sends it. Throws the faults that stand in its way; the building is then as it was. */
+  async make(edit: (building: Building) => Edit): Promise<void> {
+    const made = edit(this.building)
+    if (made.changes.length > 0) await this.#send(made)
+  }
+
+  /** Opens the place where a missing thing is given, and puts the keyboard there. */
+  async open({ target: { part, element } }: Missing): Promise<void> {
+    this.part = PART_OF[part]
+    if (element?.kind === 'line') this.sheet = element.id
+    if (element?.kind === 'member' && element.within !== undefined) {
+      this.sheet = element.within
+      this.picked = [{ line: element.within, id: element.id }]
+    }
+    await tick()
+    const near = document.querySelector(`[data-missing~="${part}"]`)
+    const target = near?.matches('input, select, button, textarea')
+      ? near
+      : near?.querySelector('input:not(:disabled), select:not(:disabled), button:not(:disabled)')
+    ;(target as HTMLElement | null | undefined)?.focus()
+  }
+}
+
+const KEY = Symbol('desk')
+
+export function layDesk(desk: Desk): Desk {
+  return setContext(KEY, desk)
+}
+
+export function useDesk(): Desk {
+  const desk = getContext<Desk | undefined>(KEY)
+  if (!desk) throw new Error('This part of Describe stands outside of the place Describe.')
+  return desk
+}
