@@ -7,6 +7,7 @@ import type { Missing, MissingPart } from '../../app/assess/missing.ts'
 import type { Building, FrameLine, Member } from '../../app/model/building.ts'
 import type { Edit } from '../../app/model/changes.ts'
 import type { MemberRef } from '../../app/model/edits/refs.ts'
+import type { SelectionState } from '../state/selection.svelte.ts'
 
 export type DescribePart = 'building' | 'grid' | 'sections' | 'lines' | 'members' | 'points' | 'criteria'
 
@@ -24,16 +25,25 @@ const PART_OF: Record<MissingPart, DescribePart> = {
 
 export class Desk {
   part = $state<DescribePart>('grid')
-  /** Name of the frame line whose elevation is shown; null is the plan. */
-  sheet = $state<string | null>(null)
   #picked = $state.raw<readonly MemberRef[]>([])
   #supports = $state.raw<readonly string[]>([])
   readonly #building: () => Building
   readonly #send: (edit: Edit) => Promise<void>
+  readonly #selection: SelectionState
 
-  constructor(building: () => Building, send: (edit: Edit) => Promise<void>) {
+  constructor(building: () => Building, selection: SelectionState, send: (edit: Edit) => Promise<void>) {
     this.#building = building
+    this.#selection = selection
     this.#send = send
+  }
+
+  /** Name of the frame line whose elevation is shown; null is the plan. */
+  get sheet(): string | null {
+    return this.#selection.sheet
+  }
+
+  set sheet(line: string | null) {
+    this.#selection.sheet = line
   }
 
   get building(): Building {
@@ -51,8 +61,11 @@ export class Desk {
     return this.#picked.filter((ref) => this.member(ref))
   }
 
+  /** The last one picked is also what the other places show as picked. */
   set picked(refs: readonly MemberRef[]) {
     this.#picked = refs
+    const last = refs.at(-1)
+    this.#selection.pick(last ? { kind: 'member', ...last } : null)
   }
 
   /** Supports picked, in the order in which they were, that are still there. */
