@@ -16,11 +16,11 @@ import {
   drawLegend,
   legendRows,
   LEGEND_ROW,
-  loadEntry,
+  wordsEntry,
   momentEntry,
   statusEntry,
   type Entry,
-} from './elevation/legend.ts'
+} from './legend.ts'
 import { levelsOf } from './elevation/levels.ts'
 import { drawLoads, isLoaded, LOADS_HEADROOM } from './elevation/loads.ts'
 import { drawMembers, drawPins, drawSelection } from './elevation/members.ts'
@@ -178,14 +178,14 @@ function entriesOf(frame: DrawnFrame, show: ElevationLayers, factor: number, mom
   const entries: Entry[] = []
   if (finding && show.deformed) entries.push(deformedEntry(factor))
   if (finding && show.moments && moments.mmPerKNm > 0) entries.push(momentEntry(moments.bar_kNm, moments.mmPerKNm))
-  if (show.loads && isLoaded(frame)) entries.push(loadEntry('G permanent, Q variable: kN/m, kN'))
+  if (show.loads && isLoaded(frame)) entries.push(wordsEntry('G permanent, Q variable: kN/m, kN'))
   if (finding) {
     const held = [...finding.members, ...finding.spans]
     const shown = new Set(held.map((x) => x.status))
     for (const status of ['red', 'amber', 'green', 'none'] as const)
       if (shown.has(status)) entries.push(statusEntry(status, status === 'none' ? 'no capacity given' : status))
     if (finding.members.some((m) => m.status === 'red' || m.status === 'amber') && show.labels)
-      entries.push(loadEntry('% of capacity, induced'))
+      entries.push(wordsEntry('% of capacity, induced'))
   }
   return entries
 }

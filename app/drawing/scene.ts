@@ -41,6 +41,8 @@ export type Role =
   | 'trigger-red'
   | 'load'
   | 'settlement-disc' // a support on the plan, its area by its settlement
+  | 'settlement-rise' // one that has risen
+  | 'settlement-estimated' // one that was not measured
   | 'column' // a column on the plan
   | 'text-moment'
   | 'text-settlement'

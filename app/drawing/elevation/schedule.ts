@@ -4,11 +4,12 @@
  */
 import type { SpanFinding, SupportFinding } from '../../model/findings.ts'
 import { fixed, millimetres, ratio } from '../../model/numbers.ts'
+import { bubbleFor, BUBBLE, drawBubble, statusMark } from '../bubble.ts'
 import type { Point, Primitive, Target } from '../scene.ts'
-import { arrow, baselineFor, circle, line, mark, polygon, sameTarget, text, type Extra } from '../shapes.ts'
+import { arrow, baselineFor, line, polygon, sameTarget, text, type Extra } from '../shapes.ts'
 import { MARK, SMALL, TEXT } from '../sizes.ts'
-import { fitText, textWidth } from '../text-width.ts'
-import { leastBay, type DrawnBase, type DrawnFrame } from './frame.ts'
+import { textWidth } from '../text-width.ts'
+import { leastBay, type DrawnFrame } from './frame.ts'
 
 export interface Row {
   drawn: Primitive[]
@@ -20,7 +21,6 @@ export interface Row {
 
 const ARROW = 7
 const LINE = 3.9
-const BUBBLE = 3.6
 
 /** Arrows in the ratio of the settlements, the value ± its interval below each. */
 export function settlementRow(
@@ -130,58 +130,11 @@ export function bubbleRow(
     if (i % every !== 0) return []
     const finding = found.get(base.support)
     const label = finding ? settlementLabel(finding, z) : `Support ${base.support}`
-    return bubble(base, y, Math.max(4.4, room), label, selected)
+    const target: Target = { kind: 'support', id: base.support }
+    const made = bubbleFor(base.support, Math.max(4.4, room))
+    return drawBubble(made, [base.at[0], y], { target, label }, sameTarget(selected, target))
   })
   return { drawn, height: 2 * BUBBLE + 1, middle: BUBBLE, title: '' }
-}
-
-function bubble(
-  { at: [x], support }: DrawnBase,
-  y: number,
-  room: number,
-  label: string,
-  selected?: Target,
-): Primitive[] {
-  const target: Target = { kind: 'support', id: support }
-  const radius = Math.min(BUBBLE, room / 2)
-  const size = Math.min(TEXT, radius * 0.95)
-  const words = fitText(support, Math.min(room - 2, 34), size) || fitText(support, room, size)
-  const half = Math.max(radius, textWidth(words, size) / 2 + 1.3)
-  const shapes: Primitive[] = []
-  if (sameTarget(selected, target)) shapes.push(...pill('selection', x, y, half, radius, {}))
-  shapes.push(...pill('grid', x, y, half, radius, { target, label }))
-  shapes.push(text('text', [x, baselineFor(y, size)], words, size, 'middle', { target, label }))
-  return shapes
-}
-
-/** A circle, drawn out to a rounded bar where it is wider than high. */
-function pill(
-  role: 'grid' | 'selection',
-  x: number,
-  y: number,
-  half: number,
-  radius: number,
-  extra: Extra,
-): Primitive[] {
-  if (half <= radius + 0.01) return [circle(role, [x, y], radius, extra)]
-  const [l, r, k] = [x - half + radius, x + half - radius, radius * 0.5523]
-  return [
-    {
-      shape: 'path',
-      role,
-      d: [
-        { to: 'move', at: [l, y - radius] },
-        { to: 'line', at: [r, y - radius] },
-        { to: 'curve', c1: [r + k, y - radius], c2: [r + radius, y - k], at: [r + radius, y] },
-        { to: 'curve', c1: [r + radius, y + k], c2: [r + k, y + radius], at: [r, y + radius] },
-        { to: 'line', at: [l, y + radius] },
-        { to: 'curve', c1: [l - k, y + radius], c2: [l - radius, y + k], at: [l - radius, y] },
-        { to: 'curve', c1: [l - radius, y - k], c2: [l - k, y - radius], at: [l, y - radius] },
-        { to: 'close' },
-      ],
-      ...extra,
-    },
-  ]
 }
 
 /** Angular distortion of each bay as 1/n with its status; a ring round the mark says borderline. */
@@ -220,10 +173,10 @@ export function distortionRow(
     const y = top + 2.2
     if (setting === 'beside') {
       const start = x - (width + MARK + 1.2) / 2
-      shapes.push(...statusMark(span, [start + MARK / 2, y], extra))
+      shapes.push(...statusMark(span.status, span.certainty, [start + MARK / 2, y], extra))
       shapes.push(text('text', [start + MARK + 1.2, baselineFor(y, TEXT)], words, TEXT, 'start', extra))
     } else {
-      shapes.push(...statusMark(span, [x, y], extra))
+      shapes.push(...statusMark(span.status, span.certainty, [x, y], extra))
       shapes.push(
         setting === 'below'
           ? text('text', [x, top + 7.2], words, TEXT, 'middle', extra)
@@ -234,34 +187,6 @@ export function distortionRow(
   })
   const height = setting === 'beside' ? 4.6 : setting === 'below' ? 8.4 : 5.4 + widest
   return { drawn, height, middle: 2.2, title: 'angular distortion' }
-}
-
-export function statusMark(
-  { status, certainty }: Pick<SpanFinding, 'status' | 'certainty'>,
-  at: Point,
-  extra: Extra,
-): Primitive[] {
-  const shapes = [mark(status, at, certainty === 'borderline' ? MARK * 0.78 : MARK, extra)]
-  if (certainty === 'borderline' && status !== 'none') shapes.push(ring(status, at, extra))
-  return shapes
-}
-
-/** An open ring: drawn as a path that is not closed, so that it has no filling. */
-function ring(status: 'green' | 'amber' | 'red', [x, y]: Point, extra: Extra): Primitive {
-  const r = MARK * 0.66
-  const k = r * 0.5523
-  return {
-    shape: 'path',
-    role: `status-${status}`,
-    d: [
-      { to: 'move', at: [x, y - r] },
-      { to: 'curve', c1: [x + k, y - r], c2: [x + r, y - k], at: [x + r, y] },
-      { to: 'curve', c1: [x + r, y + k], c2: [x + k, y + r], at: [x, y + r] },
-      { to: 'curve', c1: [x - k, y + r], c2: [x - r, y + k], at: [x - r, y] },
-      { to: 'curve', c1: [x - r, y - k], c2: [x - k, y - r], at: [x, y - r] },
-    ],
-    ...extra,
-  }
 }
 
 export function distortionLabel(span: SpanFinding, z: number): string {

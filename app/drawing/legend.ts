@@ -1,9 +1,9 @@
 /** The legend along the top: each entry a sample and its words, set from the left until the line is full. */
-import type { Primitive } from '../scene.ts'
-import { baselineFor, corners, line, mark, polygon, text } from '../shapes.ts'
-import { SMALL } from '../sizes.ts'
-import { textWidth } from '../text-width.ts'
-import type { Status } from '../../model/findings.ts'
+import type { Primitive, Role } from './scene.ts'
+import { baselineFor, corners, line, mark, polygon, text } from './shapes.ts'
+import { SMALL } from './sizes.ts'
+import { textWidth } from './text-width.ts'
+import type { Status } from '../model/findings.ts'
 
 export interface Entry {
   width: number
@@ -36,11 +36,16 @@ export function momentEntry(bar_kNm: number, mmPerKNm: number): Entry {
   }
 }
 
+/** A sample of a line in its role. */
+export function lineEntry(role: Role, words: string): Entry {
+  return { width: 7, words, draw: (x, y) => [line(role, [x, y], [x + 7, y])] }
+}
+
 export function statusEntry(status: Status, words: string): Entry {
   return { width: 2.4, words, draw: (x, y) => [mark(status, [x + 1.2, y], 2.4)] }
 }
 
-export function loadEntry(words: string): Entry {
+export function wordsEntry(words: string): Entry {
   return { width: 0, words, draw: () => [] }
 }
 
