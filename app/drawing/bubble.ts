@@ -59,16 +59,15 @@ function pill(role: Role, x: number, y: number, half: number, radius: number, ex
 /** A status mark; a ring round it says that the value is borderline. */
 export function statusMark(status: Status, certainty: Certainty, at: Point, extra: Extra = {}): Primitive[] {
   if (certainty === 'clear' || status === 'none') return [mark(status, at, MARK, extra)]
-  return [mark(status, at, MARK * 0.72, extra), ring(status, at, extra)]
+  return [mark(status, at, MARK * 0.72, extra), ring(`status-${status}`, at, MARK * 0.64, extra)]
 }
 
-/** Of two halves, each an open path, so that it has no filling. */
-function ring(status: Exclude<Status, 'none'>, [x, y]: Point, extra: Extra): Primitive {
-  const r = MARK * 0.64
+/** A circle that has no filling, whatever its role: a path that is not closed. */
+export function ring(role: Role, [x, y]: Point, r: number, extra: Extra = {}): Primitive {
   const k = r * 0.5523
   return {
     shape: 'path',
-    role: `status-${status}`,
+    role,
     d: [
       { to: 'move', at: [x, y - r] },
       { to: 'curve', c1: [x + k, y - r], c2: [x + r, y - k], at: [x + r, y] },

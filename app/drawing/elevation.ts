@@ -102,7 +102,7 @@ export function elevation(input: ElevationInput): Scene {
     ...drawPins(frame),
     ...deformed.drawn,
     ...figures,
-    ...levelMarks(levelsOf(frame, TEXT + 1.4), left - column, TEXT),
+    ...levelMarks(levelsOf(frame, ground.depths, TEXT + 1.4), left - column, TEXT),
     ...rows.flatMap((r) => r.drawn),
     ...drawLegend(legend, EDGE, EDGE),
   ]
@@ -135,7 +135,7 @@ function dress(
 ): Layout {
   const room = roomBeside(frame)
   const nodes = frame.finding?.nodes ?? []
-  const factor = given ?? factorFor(nodes, frame.scale, room * 0.6)
+  const factor = given ?? factorFor(nodes, frame.scale, room * 0.35)
   const moments = momentScale(frame, room)
   const legend = legendRows(entriesOf(frame, show, factor, moments), width - 2 * EDGE)
   const supports = new Map(findings?.supports.map((s) => [s.support, s]))

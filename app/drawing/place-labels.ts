@@ -18,6 +18,8 @@ export interface Wanted {
   height: number
   /** Centres, the best first. */
   places: readonly Point[]
+  /** Left out rather than set on a soft line. */
+  isShy?: boolean
 }
 
 export interface Obstacles {
@@ -32,7 +34,7 @@ export interface Obstacles {
 /** A box for each label, in their order; undefined where there was no room. */
 export function placeLabels(wanted: readonly Wanted[], obstacles: Obstacles, gap = 0.4): (Box | undefined)[] {
   const taken: Box[] = [...(obstacles.boxes ?? [])]
-  return wanted.map(({ width, height, places }) => {
+  return wanted.map(({ width, height, places, isShy }) => {
     const boxes = places
       .map(([x, y]): Box => ({ x: x - width / 2, y: y - height / 2, width, height }))
       .filter(
@@ -41,7 +43,7 @@ export function placeLabels(wanted: readonly Wanted[], obstacles: Obstacles, gap
           !taken.some((t) => overlap(box, t, gap)) &&
           !crossesAny(box, obstacles.segments),
       )
-    const box = boxes.find((b) => !crossesAny(b, obstacles.soft)) ?? boxes[0]
+    const box = boxes.find((b) => !crossesAny(b, obstacles.soft)) ?? (isShy ? undefined : boxes[0])
     if (box) taken.push(box)
     return box
   })

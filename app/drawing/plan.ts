@@ -15,8 +15,11 @@ import { DIMENSION_AWAY, gridDimensions } from './plan/grid-dimensions.ts'
 import { BUBBLE_AWAY, drawLines, lineBubbles, LONGEST_BUBBLE, planLines, type PlanLine } from './plan/lines.ts'
 import type { Box } from './place-labels.ts'
 import type { Point, Primitive, Scene, Target } from './scene.ts'
-import { circle, text } from './shapes.ts'
+import { circle, corners, polygon, text } from './shapes.ts'
 import { EDGE, TEXT } from './sizes.ts'
+
+/** Room that the values of the last supports want before the dimension line. */
+const VALUES_BESIDE = 9
 
 export interface PlanInput {
   building: Building
@@ -34,7 +37,8 @@ export function plan(input: PlanInput): Scene {
   if (building.supports.length === 0) return empty(input)
   const show = { contours: true, dimensions: true, ...input.show }
   const z = intervalFactor(criteriaOf(building).confidence)
-  const fit = planIn(building, roomFor(input))
+  const awayRight = DIMENSION_AWAY + (findings ? VALUES_BESIDE : 0)
+  const fit = planIn(building, roomFor(input, awayRight))
   const lines = planLines(building, fit, findings)
   const supports = planSupports(building, fit, z, findings?.supports)
   const contour = show.contours ? planContours(supports, z) : undefined
@@ -44,21 +48,21 @@ export function plan(input: PlanInput): Scene {
   const within: Box = { x: EDGE, y: top, width: width - 2 * EDGE, height: height - top - EDGE - FOOTER }
   const bubbles = lineBubbles(lines, fit, within, selected)
   const segments = [...lines.map((l) => [l.from, l.to] as const), ...bubbles.leaders]
-  const boxes = [...bubbles.boxes, ...supports.map(discBox), ...dimensionBoxes(show.dimensions, fit.box)]
-  const soft = contour?.lines.flatMap((c) => c.points.slice(1).map((p, i) => [c.points[i]!, p] as const))
-  const labels = supportLabels(supports, z, { within, boxes, segments, soft })
+  const boxes = [...bubbles.boxes, ...supports.map(discBox), ...dimensionBoxes(show.dimensions, fit.box, awayRight)]
+  const labels = supportLabels(supports, z, { within, boxes, segments })
   const values = contour ? contourLabels(contour, { within, boxes: [...boxes, ...labels.boxes], segments }) : undefined
 
   const foot = height - EDGE - FOOTER / 2
-  const bar = scaleBar(fit.scale, EDGE, foot + 1.5, Math.min(40, width * 0.25))
+  const bar = scaleBar(fit.scale, EDGE, foot + 1.5, Math.min(52, width * 0.28))
   const primitives: Primitive[] = [
     ...(contour ? drawContours(contour) : []),
     ...(values?.drawn ?? []),
+    ...(contour ? labels.boxes.map((b) => polygon('paper', corners(b.x, b.y, b.width, b.height))) : []),
     ...bubbles.drawn,
     ...drawLines(lines, selected),
     ...drawSupports(supports, selected),
     ...labels.drawn,
-    ...(show.dimensions ? gridDimensions(building, fit) : []),
+    ...(show.dimensions ? gridDimensions(building, fit, awayRight) : []),
     ...bar,
     ...(findings
       ? tiltArrow(findings.tilt, z, width - EDGE, foot)
@@ -69,11 +73,11 @@ export function plan(input: PlanInput): Scene {
 }
 
 /** What is left of the sheet for the supports themselves. */
-function roomFor({ building, width, height }: PlanInput): Box {
+function roomFor({ building, width, height }: PlanInput, awayRight: number): Box {
   const half = Math.max(0, ...building.frame_lines.map((l) => bubbleFor(l.id, LONGEST_BUBBLE).half))
   const left = EDGE + BUBBLE_AWAY + half + 5
   const top = EDGE + LEGEND_ROW + BUBBLE_AWAY + 9
-  const right = EDGE + DIMENSION_AWAY + 4
+  const right = EDGE + awayRight + 3
   const bottom = EDGE + FOOTER + DIMENSION_AWAY + 4
   return { x: left, y: top, width: Math.max(4, width - left - right), height: Math.max(4, height - top - bottom) }
 }
@@ -97,12 +101,12 @@ function discBox({ at: [x, y], radius }: PlanSupport): Box {
   return { x: x - r, y: y - r, width: 2 * r, height: 2 * r }
 }
 
-function dimensionBoxes(shown: boolean, plan: Box): Box[] {
+function dimensionBoxes(shown: boolean, plan: Box, awayRight: number): Box[] {
   if (!shown) return []
   const away = DIMENSION_AWAY - 4
   return [
     { x: plan.x - 3, y: plan.y + plan.height + away, width: plan.width + 6, height: 6 },
-    { x: plan.x + plan.width + away, y: plan.y - 3, width: 6, height: plan.height + 6 },
+    { x: plan.x + plan.width + awayRight - 4, y: plan.y - 3, width: 6, height: plan.height + 6 },
   ]
 }
 

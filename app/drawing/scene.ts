@@ -34,8 +34,12 @@ export type Role =
   | 'text'
   | 'text-strong'
   | 'text-quiet'
-  | 'axis'
-  | 'series'
+  | 'axis' // guides the eye: gridlines of a chart
+  | 'leader'
+  | 'series' // a movement against time
+  | 'series-moment' // a moment, or what it makes of a member, against time
+  | 'series-other' // what is shown beside the one that is spoken of
+  | 'fit'
   | 'band'
   | 'trigger-amber'
   | 'trigger-red'

@@ -30,6 +30,8 @@ export interface Inks {
   ink: string
   quiet: string
   rule: string
+  /** Lines that only guide the eye. */
+  faint: string
   movement: string
   movementTint: string
   bending: string
@@ -47,6 +49,7 @@ export const LIGHT: Inks = {
   ink: '#1e2730',
   quiet: '#59626b',
   rule: '#8d8f8c',
+  faint: '#cfccc2',
   movement: '#0c7378',
   movementTint: '#cbe0dd',
   bending: '#65429a',
@@ -56,7 +59,7 @@ export const LIGHT: Inks = {
   amber: '#a86400',
   red: '#b4241c',
   selection: '#ecdcae',
-  bandTint: '#dbe7e3',
+  bandTint: '#e3e3dc',
 }
 
 export const PRINT: Inks = {
@@ -65,7 +68,7 @@ export const PRINT: Inks = {
   movementTint: '#d3e8e6',
   bendingTint: '#ebe4f1',
   selection: '#f3e6bf',
-  bandTint: '#e3efec',
+  bandTint: '#ecece8',
 }
 
 export const DARK: Inks = {
@@ -73,6 +76,7 @@ export const DARK: Inks = {
   ink: '#e9e5db',
   quiet: '#a3abb2',
   rule: '#7b838a',
+  faint: '#3d454c',
   movement: '#4cc3c4',
   movementTint: '#1d4347',
   bending: '#b99ae8',
@@ -82,7 +86,7 @@ export const DARK: Inks = {
   amber: '#e3a33c',
   red: '#f2766b',
   selection: '#574a22',
-  bandTint: '#1f3335',
+  bandTint: '#2a3138',
 }
 
 export const lightTheme: Theme = themeOf('light', LIGHT)
@@ -130,8 +134,12 @@ function themeOf(name: Theme['name'], c: Inks): Theme {
       text: { ink: c.ink },
       'text-strong': { ink: c.ink, strong: true },
       'text-quiet': { ink: c.quiet },
-      axis: quietLine,
-      series: { stroke: c.movement, width: 0.4, fill: c.movement },
+      axis: { stroke: c.faint, width: 0.18 },
+      leader: quietLine,
+      series: { stroke: c.movement, width: 0.4, fill: c.movement, ink: c.movement },
+      'series-moment': { stroke: c.bending, width: 0.4, fill: c.bending, ink: c.bending },
+      'series-other': { stroke: c.rule, width: 0.25, fill: c.rule, ink: c.quiet },
+      fit: { stroke: c.quiet, width: 0.25, dash: [1.6, 1] },
       band: { fill: c.bandTint },
       'trigger-amber': { stroke: c.amber, width: 0.3, dash: [2.2, 1], ink: c.amber },
       'trigger-red': { stroke: c.red, width: 0.3, ink: c.red },

@@ -9,7 +9,7 @@ import type { Point, Primitive, Target } from '../scene.ts'
 import type { DrawnFrame, DrawnMember } from './frame.ts'
 
 /** Displacement on the sheet that the automatic factor aims at, mm. */
-const AIM = 8
+const AIM = 12
 
 /** The largest displacement of any node of the line, mm in the building. */
 export function largestDisplacement(nodes: readonly NodeFinding[]): number {

@@ -19,7 +19,7 @@ interface Label extends Wanted {
 }
 
 /** How much of the largest moment an end must have to be given its figure. */
-const WORTH = 0.3
+const WORTH = 0.5
 
 export function drawLabels(
   frame: DrawnFrame,
@@ -39,7 +39,7 @@ export function drawLabels(
     within,
     boxes: taken,
     segments,
-    soft: [...curves.flatMap(segmentsOf), ...diagrams.map((d) => [d.fromTip, d.toTip] as const)],
+    soft: [...curves.flatMap(segmentsOf), ...diagrams.flatMap(outlineOf)],
   })
   return [...marks, ...textsAt(wanted, places)]
 }
@@ -133,14 +133,22 @@ function fractionLabel(frame: DrawnFrame, { from, to, member }: DrawnMember, fin
 /** The figure of each end moment that matters, just beyond the tip of its ordinate. */
 function momentLabels(frame: DrawnFrame, diagrams: readonly MomentDiagram[]): Label[] {
   const ends = diagrams.flatMap(({ drawn, finding, fromTip, toTip }) => [
-    { drawn, value: finding.moment_from_kNm, foot: drawn.from, tip: fromTip, other: drawn.to, end: 'from' as const },
-    { drawn, value: finding.moment_to_kNm, foot: drawn.to, tip: toTip, other: drawn.from, end: 'to' as const },
+    {
+      drawn,
+      finding,
+      value: finding.moment_from_kNm,
+      foot: drawn.from,
+      tip: fromTip,
+      other: drawn.to,
+      end: 'from' as const,
+    },
+    { drawn, finding, value: finding.moment_to_kNm, foot: drawn.to, tip: toTip, other: drawn.from, end: 'to' as const },
   ])
   const most = Math.max(0, ...ends.map((e) => Math.abs(e.value)))
   return ends
     .filter((e) => Math.abs(e.value) >= WORTH * most)
     .sort((a, b) => Math.abs(b.value) - Math.abs(a.value))
-    .map(({ drawn, value, foot, tip, other, end }) => {
+    .map(({ drawn, finding, value, foot, tip, other, end }) => {
       const words = moment(Math.abs(value))
       const width = textWidth(words, SMALL)
       const length = Math.hypot(tip[0] - foot[0], tip[1] - foot[1]) || 1
@@ -155,8 +163,16 @@ function momentLabels(frame: DrawnFrame, diagrams: readonly MomentDiagram[]): La
         }),
       )
       const target = { ...memberTarget(frame.line.id, drawn.member.id), end } as Extra['target']
-      return labelOf(words, 'text-moment', SMALL, places, { target })
+      return { ...labelOf(words, 'text-moment', SMALL, places, { target }), isShy: finding.status !== 'red' }
     })
+}
+
+function outlineOf({ drawn, fromTip, toTip }: MomentDiagram): (readonly [Point, Point])[] {
+  return [
+    [drawn.from, fromTip],
+    [fromTip, toTip],
+    [toTip, drawn.to],
+  ]
 }
 
 function segmentsOf(curve: Curve): (readonly [Point, Point])[] {

@@ -11,7 +11,7 @@ export interface LevelMark {
  * Levels of the nodes from the lowest to the highest, those that most nodes share first, no two nearer than
  * `gap` on the sheet; and of the undersides of the footings where they are known and alike.
  */
-export function levelsOf(frame: DrawnFrame, gap: number): LevelMark[] {
+export function levelsOf(frame: DrawnFrame, depths: readonly number[], gap: number): LevelMark[] {
   const counts = new Map<number, number>()
   for (const { z_m } of frame.line.nodes) {
     const z = Math.round(z_m * 100) / 100
@@ -23,7 +23,14 @@ export function levelsOf(frame: DrawnFrame, gap: number): LevelMark[] {
   const kept: number[] = []
   for (const z of [...counts.keys()].sort((a, b) => rank(b) - rank(a) || a - b))
     if (kept.every((k) => Math.abs(k - z) * frame.scale >= gap)) kept.push(z)
-  return kept.sort((a, b) => a - b).map((z) => ({ y: frame.place(0, z)[1], words: levelWords(z) }))
+  const marks = kept.sort((a, b) => a - b).map((z) => ({ y: frame.place(0, z)[1], words: levelWords(z) }))
+  frame.bases.forEach(({ at, node, underside_m }, i) => {
+    if (underside_m === undefined) return
+    const isToScale = Math.abs(depths[i]! - (node.z_m - underside_m) * frame.scale) < 0.01
+    const y = at[1] + depths[i]!
+    if (isToScale && marks.every((m) => Math.abs(m.y - y) >= gap)) marks.push({ y, words: levelWords(underside_m) })
+  })
+  return marks
 }
 
 /** A level as the trade writes it: with its sign, two decimals, and plus-minus at zero. */

@@ -111,7 +111,7 @@ export function dimensionRow(frame: DrawnFrame, top: number): Row | undefined {
     if (textWidth(words, SMALL) > right.at[0] - left.at[0] - 1) continue
     drawn.push(text('dimension', [(left.at[0] + right.at[0]) / 2, y - 0.9], words, SMALL))
   }
-  return { drawn, height: 7, middle: 4.6 - 1.4, title: 'm' }
+  return { drawn, height: 7, middle: 4.6 - 1.4, title: 'bays, m' }
 }
 
 /** Name of each support in a bubble; a long name makes it longer, and is cut where there is no room. */

@@ -36,8 +36,8 @@ export function tiltArrow(tilt: Tilt, z: number, right: number, y: number): Prim
   if (!isTilted(tilt, z)) return [...shapes, circle('tilt', centre, 0.5, { label })]
   const [ux, uy] = [tilt.x_rad / size, -tilt.y_rad / size]
   shapes.push(
-    circle('axis', centre, 5.2),
-    line('axis', [centre[0], centre[1] - 5.2], [centre[0], centre[1] - 4]),
+    circle('leader', centre, 5.2),
+    line('leader', [centre[0], centre[1] - 5.2], [centre[0], centre[1] - 4]),
     arrow('tilt', [centre[0] - ux * 4.4, centre[1] - uy * 4.4], [centre[0] + ux * 4.6, centre[1] + uy * 4.6], 2.4, {
       label,
     }),

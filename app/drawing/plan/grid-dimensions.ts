@@ -12,7 +12,7 @@ export const DIMENSION_AWAY = 11
 /** Beyond so many places the supports stand in no grid, and only the whole is dimensioned. */
 const MOST_PLACES = 24
 
-export function gridDimensions({ supports }: Building, fit: PlanFit): Primitive[] {
+export function gridDimensions({ supports }: Building, fit: PlanFit, awayRight: number): Primitive[] {
   const { box, place } = fit
   const across = dimensioned(
     supports.map((s) => s.x_m),
@@ -23,7 +23,7 @@ export function gridDimensions({ supports }: Building, fit: PlanFit): Primitive[
     supports.length,
   )
   const y = box.y + box.height + DIMENSION_AWAY
-  const x = box.x + box.width + DIMENSION_AWAY
+  const x = box.x + box.width + awayRight
   const drawn: Primitive[] = []
   if (across.length > 1) {
     const at = across.map((v) => place(v, 0)[0])

@@ -9,7 +9,7 @@ import { MARK } from '../sizes.ts'
 import type { PlanFit } from './fit.ts'
 
 /** From the outermost support to the middle of the bubbles. */
-export const BUBBLE_AWAY = 12
+export const BUBBLE_AWAY = 15
 /** A bubble on the plan is never longer than this. */
 export const LONGEST_BUBBLE = 26
 
@@ -120,7 +120,7 @@ export function lineBubbles(lines: readonly PlanLine[], fit: PlanFit, within: Bo
     drawn.push(...statusMark(l.status, l.certainty, away, { target, label: lineLabel(l) }))
   })
   return {
-    drawn: [...leaders.map(([a, b]) => line('axis', a, b)), ...drawn],
+    drawn: [...leaders.map(([a, b]) => line('leader', a, b)), ...drawn],
     boxes: boxes.filter((b) => b !== undefined),
     leaders,
   }
