@@ -27,7 +27,13 @@ export const SECTION_COLUMNS: readonly SectionColumn[] = [
   strength('shear_kN', 'shear', 'kN', 'none'),
 ]
 
-function stiffness(key: Stiffness, heading: string, unit: string | undefined, needed: boolean, empty = ''): SectionColumn {
+function stiffness(
+  key: Stiffness,
+  heading: string,
+  unit: string | undefined,
+  needed: boolean,
+  empty = '',
+): SectionColumn {
   return {
     key,
     heading,

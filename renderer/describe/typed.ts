@@ -49,7 +49,10 @@ export function rectangleTyped(text: string): Rectangle {
   const wrong = [b, h].filter((side) => !(side > 0))
   if (wrong.length)
     throw new InputFault([
-      { code: 'number.low', place: { ...place, value: wrong[0], detail: { above: 0, remedy: 'Write it as 300 x 600.' } } },
+      {
+        code: 'number.low',
+        place: { ...place, value: wrong[0], detail: { above: 0, remedy: 'Write it as 300 x 600.' } },
+      },
     ])
   const A_cm2 = (b * h) / 100
   return { A_cm2: rounded(A_cm2), I_cm4: rounded((b * h ** 3) / 12e4), shear_area_cm2: rounded((A_cm2 * 5) / 6) }

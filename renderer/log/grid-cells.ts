@@ -2,6 +2,15 @@
 
 export type Cells = Readonly<Record<string, string>>
 
+export interface GridColumn {
+  key: string
+  heading: string
+  unit?: string
+  kind: 'name' | 'number'
+  /** Width in characters. */
+  width: number
+}
+
 export interface Spot {
   row: number
   column: number
