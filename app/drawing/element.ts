@@ -16,7 +16,7 @@ export interface DrawnElement {
 const STRONG = 600
 
 export function elementOf(primitive: Primitive, theme: Theme): DrawnElement {
-  const style = theme.styles[primitive.role]
+  const style = weighted(theme.styles[primitive.role], primitive.weight)
   switch (primitive.shape) {
     case 'line': {
       const { from, to } = primitive
@@ -86,6 +86,11 @@ function inked({ stroke, width, fill, dash, cap }: Style, closed: boolean): Reco
     ...(stroke && cap === 'round' ? { 'stroke-linecap': 'round' } : {}),
     ...(stroke && !closed && cap !== 'round' ? {} : stroke ? { 'stroke-linejoin': 'round' } : {}),
   }
+}
+
+function weighted(style: Style, weight = 1): Style {
+  if (weight === 1 || !style.width) return style
+  return { ...style, width: mm(style.width * weight), dash: style.dash?.map((d) => mm(d * Math.sqrt(weight))) }
 }
 
 function stepText(step: PathStep): string {

@@ -4,13 +4,13 @@
  * as described.
  */
 import { intervalFactor } from '../assess/confidence.ts'
-import { criteriaOf, type Building, type FrameLine } from '../model/building.ts'
+import { criteriaOf, type Building, type Criteria, type FrameLine } from '../model/building.ts'
 import { Fault } from '../model/faults.ts'
 import { worse, type RoundFindings, type Status } from '../model/findings.ts'
 import { deformedLine, factorFor } from './elevation/deformed.ts'
-import { frameIn, roomBeside, type DrawnFrame } from './elevation/frame.ts'
+import { frameIn, roomBeside, weightOf, type DrawnFrame } from './elevation/frame.ts'
 import { depthOf, drawGround, levelMarks, LEVEL_WIDTH, OVERHANG } from './elevation/ground.ts'
-import { drawLabels, drawSectionNames } from './elevation/labels.ts'
+import { drawLabels, drawSectionNames, flagWords, isUsed } from './elevation/labels.ts'
 import {
   deformedEntry,
   drawLegend,
@@ -91,12 +91,12 @@ export function elevation(input: ElevationInput): Scene {
   const figures = !show.labels
     ? []
     : findings
-      ? drawLabels(frame, diagrams, deformed.curves, within)
-      : drawSectionNames(frame, within)
+      ? drawLabels(frame, criteriaOf(building), diagrams, deformed.curves, within)
+      : drawSectionNames(frame, within, show.loads)
   const primitives: Primitive[] = [
     ...drawSelection(frame, selected),
     ...ground.drawn,
-    ...drawMoments(found.id, diagrams),
+    ...drawMoments(found.id, diagrams, weightOf(frame)),
     ...(show.loads ? drawLoads(frame) : []),
     ...drawMembers(frame, z),
     ...drawPins(frame),
@@ -128,7 +128,7 @@ function layOut(input: ElevationInput, found: FrameLine, show: ElevationLayers, 
 }
 
 function dress(
-  { findings, width, factor: given, selected }: ElevationInput,
+  { building, findings, width, factor: given, selected }: ElevationInput,
   frame: DrawnFrame,
   show: ElevationLayers,
   z: number,
@@ -137,7 +137,7 @@ function dress(
   const nodes = frame.finding?.nodes ?? []
   const factor = given ?? factorFor(nodes, frame.scale, room * 0.35)
   const moments = momentScale(frame, room)
-  const legend = legendRows(entriesOf(frame, show, factor, moments), width - 2 * EDGE)
+  const legend = legendRows(entriesOf(frame, criteriaOf(building), show, factor, moments), width - 2 * EDGE)
   const supports = new Map(findings?.supports.map((s) => [s.support, s]))
   const floor = frame.box.y + frame.box.height
   const ground = Math.max(0, ...frame.bases.map((b) => b.at[1] + depthOf(b, frame.scale) - floor))
@@ -173,7 +173,13 @@ function titled(row: Row, x: number, top: number): Row {
   return { ...row, drawn: row.title === '' ? row.drawn : [...row.drawn, title] }
 }
 
-function entriesOf(frame: DrawnFrame, show: ElevationLayers, factor: number, moments: MomentScale): Entry[] {
+function entriesOf(
+  frame: DrawnFrame,
+  criteria: Criteria,
+  show: ElevationLayers,
+  factor: number,
+  moments: MomentScale,
+): Entry[] {
   const { finding } = frame
   const entries: Entry[] = []
   if (finding && show.deformed) entries.push(deformedEntry(factor))
@@ -184,8 +190,10 @@ function entriesOf(frame: DrawnFrame, show: ElevationLayers, factor: number, mom
     const shown = new Set(held.map((x) => x.status))
     for (const status of ['red', 'amber', 'green', 'none'] as const)
       if (shown.has(status)) entries.push(statusEntry(status, status === 'none' ? 'no capacity given' : status))
-    if (finding.members.some((m) => m.status === 'red' || m.status === 'amber') && show.labels)
-      entries.push(wordsEntry('% of capacity, induced'))
+    const flagged = finding.members.filter((m) => m.status === 'red' || m.status === 'amber')
+    const figures = show.labels ? flagged.map((m) => flagWords(m, criteria)) : []
+    if (figures.some((f) => f !== '' && !isUsed(f))) entries.push(wordsEntry('% of capacity, induced'))
+    if (figures.some(isUsed)) entries.push(wordsEntry('% used: with the loads'))
   }
   return entries
 }

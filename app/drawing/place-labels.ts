@@ -32,7 +32,7 @@ export interface Obstacles {
 }
 
 /** A box for each label, in their order; undefined where there was no room. */
-export function placeLabels(wanted: readonly Wanted[], obstacles: Obstacles, gap = 0.4): (Box | undefined)[] {
+export function placeLabels(wanted: readonly Wanted[], obstacles: Obstacles, gap = 0.8): (Box | undefined)[] {
   const taken: Box[] = [...(obstacles.boxes ?? [])]
   return wanted.map(({ width, height, places, isShy }) => {
     const boxes = places

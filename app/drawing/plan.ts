@@ -19,7 +19,7 @@ import { circle, corners, polygon, text } from './shapes.ts'
 import { EDGE, TEXT } from './sizes.ts'
 
 /** Room that the values of the last supports want before the dimension line. */
-const VALUES_BESIDE = 9
+const VALUES_BESIDE = 11
 
 export interface PlanInput {
   building: Building

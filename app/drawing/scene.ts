@@ -67,6 +67,8 @@ interface Common {
   target?: Target
   /** Short text shown on hover and read by a screen reader. */
   label?: string
+  /** Share of the role's line width, where a drawing is so small that full lines would run together. */
+  weight?: number
 }
 
 export type Point = readonly [x: number, y: number]

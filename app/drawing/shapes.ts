@@ -7,6 +7,7 @@ export interface Extra {
   id?: string
   target?: Target
   label?: string
+  weight?: number
 }
 
 export function line(role: Role, from: Point, to: Point, extra: Extra = {}): Primitive {

@@ -6,7 +6,7 @@
 import type { NodeFinding } from '../../model/findings.ts'
 import { niceBelow } from '../nice.ts'
 import type { Point, Primitive, Target } from '../scene.ts'
-import type { DrawnFrame, DrawnMember } from './frame.ts'
+import { weightOf, type DrawnFrame, type DrawnMember } from './frame.ts'
 
 /** Displacement on the sheet that the automatic factor aims at, mm. */
 const AIM = 12
@@ -71,6 +71,7 @@ export function deformedLine(frame: DrawnFrame, factor: number): { curves: Curve
     const curve = deformedCurve(m, nodes, frame.scale, factor)
     return curve ? [{ m, curve }] : []
   })
+  const weight = weightOf(frame)
   const drawn = found.map(({ m, curve }): Primitive => {
     const target: Target = { kind: 'member', line: frame.line.id, id: m.member.id }
     const { from, c1, c2, to } = curve
@@ -82,6 +83,7 @@ export function deformedLine(frame: DrawnFrame, factor: number): { curves: Curve
         { to: 'curve', c1, c2, at: to },
       ],
       target,
+      ...(weight < 1 ? { weight } : {}),
     }
   })
   return { curves: found.map((f) => f.curve), drawn }

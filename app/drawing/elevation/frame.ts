@@ -109,6 +109,11 @@ export function leastBay(frame: DrawnFrame): number {
   return Math.min(Infinity, ...frame.bases.slice(1).map((b, i) => b.at[0] - frame.bases[i]!.at[0]))
 }
 
+/** Lines of a frame with short members are thinner, so that they do not run together. */
+export function weightOf(frame: DrawnFrame): number {
+  return Math.min(1, Math.max(0.3, roomBeside(frame) / 9))
+}
+
 /** A length on the sheet that a diagram beside a member may have without reaching the next member. */
 export function roomBeside({ members, box }: DrawnFrame): number {
   const lengths = members.map((m) => m.length).sort((a, b) => a - b)

@@ -1,4 +1,5 @@
 /** Figures on the frame: the flagged members' share of capacity at a status mark, induced moments at their ends. */
+import type { Criteria } from '../../model/building.ts'
 import { byWorst, type MemberFinding } from '../../model/findings.ts'
 import { moment } from '../../model/numbers.ts'
 import { placeLabels, type Box, type Wanted } from '../place-labels.ts'
@@ -20,19 +21,22 @@ interface Label extends Wanted {
 
 /** How much of the largest moment an end must have to be given its figure. */
 const WORTH = 0.5
+/** On a member shorter than this on the sheet a mark would hide it, and no figure could be told to be its own. */
+const LEAST_LENGTH = 7
 
 export function drawLabels(
   frame: DrawnFrame,
+  criteria: Criteria,
   diagrams: readonly MomentDiagram[],
   curves: readonly Curve[],
   within: Box,
 ): Primitive[] {
-  const flagged = flaggedMembers(frame)
+  const flagged = flaggedMembers(frame).filter(({ drawn }) => drawn.length >= LEAST_LENGTH)
   const marks = flagged.map(({ drawn, finding }) => markOf(frame, drawn, finding))
   const taken = flagged.map(({ drawn }) => around(between(drawn.from, drawn.to, 0.5), MARK))
   const segments = frame.members.map((m) => [m.from, m.to] as const)
   const wanted = [
-    ...flagged.flatMap(({ drawn, finding }) => fractionLabel(frame, drawn, finding)),
+    ...flagged.flatMap(({ drawn, finding }) => fractionLabel(frame, criteria, drawn, finding)),
     ...momentLabels(frame, diagrams),
   ]
   const places = placeLabels(wanted, {
@@ -45,17 +49,14 @@ export function drawLabels(
 }
 
 /** Names of sections along the members of a frame that is only described. */
-export function drawSectionNames(frame: DrawnFrame, within: Box): Primitive[] {
+export function drawSectionNames(frame: DrawnFrame, within: Box, hasLoads: boolean): Primitive[] {
   const wanted = frame.members.flatMap(({ member, from, to, length }): Label[] => {
     const width = textWidth(member.section, SMALL)
     const isFlat = Math.abs(to[0] - from[0]) > 2 * Math.abs(to[1] - from[1])
     const middle = between(from, to, 0.5)
     if (isFlat && width > length - 3) return []
     const places: Point[] = isFlat
-      ? [
-          [middle[0], middle[1] - 2.2],
-          [middle[0], middle[1] + 2.2],
-        ]
+      ? [...(hasLoads ? [] : [[middle[0], middle[1] - 2.2] as const]), [middle[0], middle[1] + 2.2]]
       : [
           [middle[0] + width / 2 + 1.4, middle[1]],
           [middle[0] - width / 2 - 1.4, middle[1]],
@@ -102,48 +103,78 @@ function markOf(frame: DrawnFrame, { from, to, length, member }: DrawnMember, { 
   return mark(status, between(from, to, 0.5), size, { target: memberTarget(frame.line.id, member.id) })
 }
 
-function fractionLabel(frame: DrawnFrame, { from, to, member }: DrawnMember, finding: MemberFinding): Label[] {
-  if (finding.induced_fraction === undefined) return []
-  const words = wholePercent(finding.induced_fraction)
+const USED = 'used'
+
+export function isUsed(words: string): boolean {
+  return words.endsWith(USED)
+}
+
+/** The figure that made the flag: the share of capacity induced, or what is used of it with the loads. */
+export function flagWords(finding: MemberFinding, { induced_fraction, utilisation }: Criteria): string {
+  const reached = (value: number | undefined, triggers: { amber: number; red: number }): number =>
+    value === undefined || value < triggers.amber ? 0 : value < triggers.red ? 1 : 2
+  const byUse = reached(finding.utilisation, utilisation) > reached(finding.induced_fraction, induced_fraction)
+  if (byUse) return `${wholePercent(finding.utilisation!)} ${USED}`
+  return finding.induced_fraction === undefined ? '' : wholePercent(finding.induced_fraction)
+}
+
+function fractionLabel(
+  frame: DrawnFrame,
+  criteria: Criteria,
+  { from, to, member, length }: DrawnMember,
+  finding: MemberFinding,
+): Label[] {
+  const words = flagWords(finding, criteria)
+  if (words === '') return []
   const width = textWidth(words, TEXT, 'medium')
   const [x, y] = between(from, to, 0.5)
-  const up = TEXT * 0.36 + 1.7
+  const up = TEXT * 0.36 + 2.3
   const side = width / 2 + 2
   const isFlat = Math.abs(to[0] - from[0]) >= Math.abs(to[1] - from[1])
-  const places: Point[] = isFlat
+  const beside: Point[] = [
+    [x + side, y - up],
+    [x - side, y - up],
+    [x + side, y + up],
+    [x - side, y + up],
+  ]
+  const nearest: Point[] = isFlat
     ? [
         [x, y - up],
         [x, y + up],
-        [x + side, y - up],
-        [x - side, y - up],
-        [x + side, y + up],
-        [x - side, y + up],
       ]
     : [
         [x + side, y],
         [x - side, y],
-        [x + side, y - up],
-        [x - side, y - up],
-        [x + side, y + up],
-        [x - side, y + up],
       ]
+  // Beside the mark of a flat member only while the figure stays over its own member.
+  const places = isFlat && side + width / 2 > length / 2 ? nearest : [...nearest, ...beside]
   return [labelOf(words, 'text-strong', TEXT, places, { target: memberTarget(frame.line.id, member.id) })]
 }
 
 /** The figure of each end moment that matters, just beyond the tip of its ordinate. */
 function momentLabels(frame: DrawnFrame, diagrams: readonly MomentDiagram[]): Label[] {
-  const ends = diagrams.flatMap(({ drawn, finding, fromTip, toTip }) => [
-    {
-      drawn,
-      finding,
-      value: finding.moment_from_kNm,
-      foot: drawn.from,
-      tip: fromTip,
-      other: drawn.to,
-      end: 'from' as const,
-    },
-    { drawn, finding, value: finding.moment_to_kNm, foot: drawn.to, tip: toTip, other: drawn.from, end: 'to' as const },
-  ])
+  const ends = diagrams
+    .filter((d) => d.drawn.length >= LEAST_LENGTH)
+    .flatMap(({ drawn, finding, fromTip, toTip }) => [
+      {
+        drawn,
+        finding,
+        value: finding.moment_from_kNm,
+        foot: drawn.from,
+        tip: fromTip,
+        other: drawn.to,
+        end: 'from' as const,
+      },
+      {
+        drawn,
+        finding,
+        value: finding.moment_to_kNm,
+        foot: drawn.to,
+        tip: toTip,
+        other: drawn.from,
+        end: 'to' as const,
+      },
+    ])
   const most = Math.max(0, ...ends.map((e) => Math.abs(e.value)))
   return ends
     .filter((e) => Math.abs(e.value) >= WORTH * most)

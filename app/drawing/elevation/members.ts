@@ -3,7 +3,7 @@ import type { MemberFinding, Status } from '../../model/findings.ts'
 import { moment } from '../../model/numbers.ts'
 import { between, circle, line, sameTarget } from '../shapes.ts'
 import type { Primitive, Role, Target } from '../scene.ts'
-import type { DrawnFrame, DrawnMember } from './frame.ts'
+import { weightOf, type DrawnFrame, type DrawnMember } from './frame.ts'
 
 const ROLES: Record<Status, Role> = {
   none: 'member',
@@ -20,6 +20,7 @@ export function memberTarget(line: string, id: string): Target {
 /** Lines of all members, the worst on top. */
 export function drawMembers(frame: DrawnFrame, z: number): Primitive[] {
   const findings = new Map(frame.finding?.members.map((m) => [m.member, m]))
+  const weight = weightOf(frame)
   return frame.members
     .map((drawn): Primitive => {
       const finding = findings.get(drawn.member.id)
@@ -27,6 +28,7 @@ export function drawMembers(frame: DrawnFrame, z: number): Primitive[] {
         id: `member/${frame.line.id}/${drawn.member.id}`,
         target: memberTarget(frame.line.id, drawn.member.id),
         label: memberLabel(drawn, finding, z),
+        ...(weight < 1 ? { weight } : {}),
       })
     })
     .sort((a, b) => ORDER.indexOf(a.role) - ORDER.indexOf(b.role))

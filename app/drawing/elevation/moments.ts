@@ -63,7 +63,7 @@ export function momentDiagrams(frame: DrawnFrame, { mmPerKNm }: MomentScale): Mo
 }
 
 /** Fill, hatching and outline; all fills come first so that no outline is covered. */
-export function drawMoments(lineId: string, diagrams: readonly MomentDiagram[]): Primitive[] {
+export function drawMoments(lineId: string, diagrams: readonly MomentDiagram[], weight: number): Primitive[] {
   const shapes = diagrams.map((d) => ({
     d,
     points: [d.drawn.from, d.fromTip, d.toTip, d.drawn.to],
@@ -72,7 +72,13 @@ export function drawMoments(lineId: string, diagrams: readonly MomentDiagram[]):
   return [
     ...shapes.map(({ points, target }) => polygon('moment-fill', points, { target })),
     ...diagrams.flatMap(hatching),
-    ...shapes.map(({ points, target }): Primitive => ({ shape: 'polyline', role: 'moment', points, target })),
+    ...shapes.map(({ points, target }): Primitive => ({
+      shape: 'polyline',
+      role: 'moment',
+      points,
+      target,
+      ...(weight < 1 ? { weight } : {}),
+    })),
   ]
 }
 

@@ -97,7 +97,7 @@ export function settlementLabel(finding: SupportFinding, z: number): string {
 export function dimensionRow(frame: DrawnFrame, top: number): Row | undefined {
   const { bases } = frame
   if (bases.length < 2) return undefined
-  const y = top + 4.6
+  const y = top + 5
   const bays = bases.slice(1).map((right, i) => ({ left: bases[i]!, right }))
   const drawn: Primitive[] = [
     line('dimension', [bases[0]!.at[0] - 1.6, y], [bases.at(-1)!.at[0] + 1.6, y]),
@@ -106,6 +106,14 @@ export function dimensionRow(frame: DrawnFrame, top: number): Row | undefined {
       line('dimension', [x, y - 2.2], [x, y + 2.4]),
     ]),
   ]
+  const lengths = bays.map(({ left, right }) => fixed(right.node.x_m - left.node.x_m, 2))
+  if (bays.some(({ left, right }, i) => textWidth(lengths[i]!, SMALL) > right.at[0] - left.at[0] - 1)) {
+    // Too many to print each: how many alike, or the whole.
+    const whole = fixed(bases.at(-1)!.node.x_m - bases[0]!.node.x_m, 2)
+    const words = lengths.every((l) => l === lengths[0]) ? `${bays.length} \u00d7 ${lengths[0]}` : whole
+    drawn.push(text('dimension', [(bases[0]!.at[0] + bases.at(-1)!.at[0]) / 2, y - 2.9], words, SMALL))
+    return { drawn, height: 7, middle: 3.2, title: 'bays, m' }
+  }
   for (const { left, right } of bays) {
     const words = fixed(right.node.x_m - left.node.x_m, 2)
     if (textWidth(words, SMALL) > right.at[0] - left.at[0] - 1) continue

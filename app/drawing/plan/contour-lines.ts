@@ -61,10 +61,22 @@ function contourWords(value: number): string {
   return fixed(value, Number.isInteger(value) ? 0 : 1)
 }
 
-/** Places along a line, from its middle outwards. */
+/** Places along a line, from its middle outwards, at last just beyond its ends. */
 function placesAlong(points: readonly Point[]): Point[] {
   const length = lengthOf(points)
-  return [0.5, 0.4, 0.6, 0.3, 0.7, 0.2, 0.8, 0.12, 0.88].map((share) => pointAt(points, share * length))
+  const inside = [0.5, 0.4, 0.6, 0.3, 0.7, 0.2, 0.8, 0.12, 0.88].map((share) => pointAt(points, share * length))
+  return [...inside, ...beyondEnds(points)]
+}
+
+function beyondEnds(points: readonly Point[]): Point[] {
+  const [a, b, y, z] = [points[0]!, points[1]!, points.at(-2)!, points.at(-1)!]
+  return [
+    [b, a],
+    [y, z],
+  ].map(([before, end]): Point => {
+    const length = Math.hypot(end![0] - before![0], end![1] - before![1]) || 1
+    return [end![0] + ((end![0] - before![0]) / length) * 2.6, end![1] + ((end![1] - before![1]) / length) * 2.6]
+  })
 }
 
 function pointAt(points: readonly Point[], distance: number): Point {

@@ -13,6 +13,8 @@ import type { PlanFit } from './fit.ts'
 const LARGEST = 4.4
 const COLUMN = 1.5
 const STUD = 0.5
+/** From baseline to baseline over the text size. */
+const LEADING = 1.22
 /** A name on the plan is never given more than this, mm. */
 const LONGEST_NAME = 24
 
@@ -76,33 +78,39 @@ interface Run {
   size: number
 }
 
-/** Name over value ± interval at a corner of the disc; where that has no room the value alone, or the name. */
+/** What may be missed of a way to label, so that it is still taken for the whole plan. */
+const MISSED = 0.12
+
+/**
+ * Name over value ± interval at a corner of the disc. Where that has no room all supports get the value alone: a
+ * figure must be told at once to be its support's own, which figures in many forms and places are not.
+ */
 export function supportLabels(
   supports: readonly PlanSupport[],
   z: number,
   obstacles: Obstacles,
 ): { drawn: Primitive[]; boxes: Box[] } {
-  const boxes: Box[] = []
-  const drawn: Primitive[] = []
-  let left = [...supports].sort((a, b) => severity(b) - severity(a))
-  for (const rows of [fullRows, shortRows]) {
-    const wanted = left.map((support) => {
+  const sorted = [...supports].sort((a, b) => severity(b) - severity(a))
+  const ways = [fullRows, valueRows, shortRows]
+  for (const rows of ways) {
+    const wanted = sorted.map((support) => {
       const lines = rows(support, z)
       const width = Math.max(...lines.map((runs) => runsWidth(runs)))
-      const height = lines.length * TEXT * 1.22 - TEXT * (1.22 - CAP_HEIGHT)
+      const height = (lines.length - 1) * TEXT * LEADING + TEXT * CAP_HEIGHT
       return { support, lines, width, height, places: cornersOf(support, width, height) }
     })
-    const placed = placeLabels(wanted, { ...obstacles, boxes: [...(obstacles.boxes ?? []), ...boxes] })
-    const missed: PlanSupport[] = []
-    wanted.forEach(({ support, lines }, i) => {
-      const box = placed[i]
-      if (!box) return void missed.push(support)
-      boxes.push(box)
-      drawn.push(...rowsAt(lines, box, box.x + box.width / 2 < support.at[0], support.extra))
-    })
-    left = missed
+    const placed = placeLabels(wanted, obstacles)
+    const missed = placed.filter((box) => box === undefined).length
+    if (missed > MISSED * supports.length && rows !== ways.at(-1)) continue
+    return {
+      boxes: placed.filter((box) => box !== undefined),
+      drawn: wanted.flatMap(({ support, lines }, i) => {
+        const box = placed[i]
+        return box ? rowsAt(lines, box, box.x + box.width / 2 < support.at[0], support.extra) : []
+      }),
+    }
   }
-  return { drawn, boxes }
+  return { drawn: [], boxes: [] }
 }
 
 function fullRows({ id, finding }: PlanSupport, z: number): Run[][] {
@@ -112,6 +120,10 @@ function fullRows({ id, finding }: PlanSupport, z: number): Run[][] {
     [name],
     [valueRun(finding), { words: `\u00b1 ${millimetres(z * finding.sd_mm)}`, role: 'text-quiet', size: SMALL }],
   ]
+}
+
+function valueRows(support: PlanSupport, z: number): Run[][] {
+  return support.finding ? fullRows(support, z).slice(1) : shortRows(support)
 }
 
 function shortRows({ id, finding }: PlanSupport): Run[][] {
@@ -133,7 +145,7 @@ function runWidth({ words, role, size }: Run): number {
 function rowsAt(lines: readonly Run[][], box: Box, toTheLeft: boolean, extra: Extra): Primitive[] {
   return lines.flatMap((runs, i) => {
     let x = toTheLeft ? box.x + box.width - runsWidth(runs) : box.x
-    const y = box.y + TEXT * CAP_HEIGHT + i * TEXT * 1.22
+    const y = box.y + TEXT * CAP_HEIGHT + i * TEXT * LEADING
     return runs.map((run) => {
       const at: Point = [x, y]
       x += runWidth(run) + 0.9
@@ -144,19 +156,12 @@ function rowsAt(lines: readonly Run[][], box: Box, toTheLeft: boolean, extra: Ex
 
 function cornersOf({ at: [x, y], radius }: PlanSupport, width: number, height: number): Point[] {
   const away = Math.max(radius * 0.75, COLUMN * 0.5) + 0.9
-  const far = radius + 1.2
   const [w, h] = [width / 2, height / 2]
   return [
     [x + away + w, y - away - h],
     [x + away + w, y + away + h],
     [x - away - w, y - away - h],
     [x - away - w, y + away + h],
-    [x + far + w, y],
-    [x - far - w, y],
-    [x, y - far - h],
-    [x, y + far + h],
-    [x + away + w + 2, y - away - h - 2],
-    [x - away - w - 2, y + away + h + 2],
   ]
 }
 
