@@ -1,12 +1,11 @@
 /**
  * The round that lies open in Log: a draft, stored a moment after each keystroke, or the correction of an accepted
- * round, which is stored once it has its reason. It outlives a look at another place.
+ * round, which is stored once it has its reason. Both outlive a look at another place.
  */
 import type { RoundView } from '../../app/contract/views.ts'
-import type { FaultRecord } from '../../app/model/faults.ts'
-import { faultsOf } from '../../app/model/faults.ts'
+import { faultsOf, type FaultRecord } from '../../app/model/faults.ts'
 import type { Cells } from '../log/grid-cells.ts'
-import { readRound, textOf, withoutBlankRows, type HeadText, type RoundText } from '../log/round-cells.ts'
+import { readRound, textOf, withoutBlankRows, type HeadText, type ReadRound, type RoundText } from '../log/round-cells.ts'
 import { contextOf } from './context.ts'
 import type { Draft, ProjectState } from './project.svelte.ts'
 import type { VisitState } from './visit.svelte.ts'
@@ -15,22 +14,20 @@ import type { VisitState } from './visit.svelte.ts'
 const PAUSE = 300
 
 export class OpenRound {
-  #text = $state.raw<RoundText>() as RoundText
+  #text: RoundText
+  #read: ReadRound
   /** What the core refused at acceptance, until the next keystroke. */
   refused = $state.raw<readonly FaultRecord[]>([])
   readonly isCorrection: boolean
-  readonly read = $derived.by(() => readRound(this.#text))
   #timer: ReturnType<typeof setTimeout> | undefined
   #saving: Promise<void> = Promise.resolve()
   readonly #project: ProjectState
-  readonly #visit: VisitState
 
-  constructor(project: ProjectState, visit: VisitState, round: RoundView, isCorrection: boolean) {
+  constructor(project: ProjectState, round: RoundView, isCorrection: boolean) {
     this.#project = project
-    this.#visit = visit
-    this.#text = textOf(round)
     this.isCorrection = isCorrection
-    this.#visit.live = this.read.whole
+    this.#text = $state.raw(textOf(round))
+    this.#read = $state.raw(readRound(this.#text))
   }
 
   get id(): string {
@@ -49,6 +46,11 @@ export class OpenRound {
     return this.#text.rows
   }
 
+  /** What the text says. */
+  get read(): ReadRound {
+    return this.#read
+  }
+
   set rows(rows: readonly Cells[]) {
     this.#type({ ...this.#text, rows })
   }
@@ -63,8 +65,8 @@ export class OpenRound {
 
   #type(text: RoundText): void {
     this.#text = text
+    this.#read = readRound(text)
     this.refused = []
-    this.#visit.live = this.read.whole
     if (this.isCorrection) return
     clearTimeout(this.#timer)
     this.#timer = setTimeout(() => void this.save(), PAUSE)
@@ -75,7 +77,7 @@ export class OpenRound {
     clearTimeout(this.#timer)
     this.#saving = this.#saving
       .catch(() => undefined) // its own caller has been told
-      .then(() => this.#project.draft(this.read.stored as Draft))
+      .then(() => this.#project.draft(this.#read.stored as Draft))
     return this.#saving
   }
 
@@ -88,51 +90,68 @@ export class OpenRound {
   }
 
   async correct(reason: string): Promise<void> {
-    await this.#attempt(() => this.#project.correct(this.read.stored as Draft, reason))
+    await this.#attempt(() => this.#project.correct(this.#read.stored as Draft, reason))
+  }
+
+  async discard(): Promise<void> {
+    clearTimeout(this.#timer)
+    await this.#saving.catch(() => undefined) // a store that failed is no reason to keep what is thrown away
+    await this.#project.discard(this.id)
   }
 
   async #attempt(act: () => Promise<void>): Promise<void> {
-    this.#text = withoutBlankRows(this.#text)
+    this.#type(withoutBlankRows(this.#text))
+    clearTimeout(this.#timer)
     try {
       await act()
-      this.#visit.live = null
     } catch (error) {
       this.refused = faultsOf(error) ?? []
       throw error
     }
   }
-
-  /** Puts the round away without storing it again. */
-  drop(): void {
-    clearTimeout(this.#timer)
-    this.#visit.live = null
-  }
 }
 
 export class LogState {
-  open = $state.raw<OpenRound | null>(null)
+  #correction = $state.raw<OpenRound | null>(null)
+  /** Drafts once opened, so that what is being typed in them is not read back from the file. */
+  readonly #drafts = new Map<string, OpenRound>()
   readonly #project: ProjectState
   readonly #visit: VisitState
 
   constructor(project: ProjectState, visit: VisitState) {
     this.#project = project
     this.#visit = visit
+    visit.typing = () => this.open?.read.whole ?? null
   }
 
-  /** Opens the draft of a name, unless it lies open. */
-  take(round: RoundView): OpenRound {
-    if (this.open && this.open.id === round.id && !this.open.isCorrection) return this.open
-    return (this.open = new OpenRound(this.#project, this.#visit, round, false))
+  /** The draft or the correction of the round that is looked at; null where that one is accepted. */
+  readonly open = $derived.by((): OpenRound | null => {
+    const id = this.#visit.round
+    if (this.#correction && this.#correction.id === id) return this.#correction
+    const draft = this.#project.view?.rounds.find((round) => round.id === id && round.state === 'draft')
+    return draft ? this.#draft(draft) : null
+  })
+
+  #draft(round: RoundView): OpenRound {
+    const key = `${this.#project.view?.path}\n${round.id}`
+    const open = this.#drafts.get(key) ?? new OpenRound(this.#project, round, false)
+    this.#drafts.set(key, open)
+    return open
   }
 
   /** Begins the correction of an accepted round, from what was accepted. */
   correct(round: RoundView): void {
-    this.open = new OpenRound(this.#project, this.#visit, round, true)
+    this.#correction = new OpenRound(this.#project, round, true)
   }
 
-  close(): void {
-    this.open?.drop()
-    this.open = null
+  /** Puts the correction aside, once it is stored or given up. */
+  endCorrection(): void {
+    this.#correction = null
+  }
+
+  /** Forgets a draft that is accepted or thrown away: its name may be used again. */
+  forget(id: string): void {
+    this.#drafts.delete(`${this.#project.view?.path}\n${id}`)
   }
 }
 

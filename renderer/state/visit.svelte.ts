@@ -25,8 +25,8 @@ type Made<T> = { value: T; faults?: undefined } | { value?: undefined; faults: r
 export class VisitState {
   readonly #project: ProjectState
   #chosen = $state<string | null>(null)
-  /** The round as it is being typed; it stands in for the draft of its name. */
-  live = $state.raw<Draft | null>(null)
+  /** Gives the round as it is being typed; Log sets it. */
+  typing: () => Draft | null = () => null
   #statuses = $state.raw<ReadonlyMap<string, Status>>(new Map())
   #before: Prepared | undefined
 
@@ -55,6 +55,11 @@ export class VisitState {
     if (visits.some((v) => v.id === this.#chosen)) return this.#chosen
     return visits.filter((v) => !v.isDraft).at(-1)?.id ?? visits.at(-1)?.id ?? null
   })
+
+  /** The round as it is being typed; it stands in for the draft of its name. */
+  get live(): Draft | null {
+    return this.typing()
+  }
 
   choose(id: string): void {
     this.#chosen = id
