@@ -71,7 +71,10 @@ export async function call<K extends RequestName>(
 }
 
 /** Asks the shell for one of the system's dialogs; null where the person turned back. */
-export async function ask<K extends keyof ShellCalls>(name: K, wish: ShellCalls[K]['takes']): Promise<ShellCalls[K]['gives']> {
+export async function ask<K extends keyof ShellCalls>(
+  name: K,
+  wish: ShellCalls[K]['takes'],
+): Promise<ShellCalls[K]['gives']> {
   return opened(await bridge.call(callOf(name, wish))) as ShellCalls[K]['gives']
 }
 
@@ -92,11 +95,18 @@ function loopback(): Bridge {
     sessionStorage.setItem(TOKEN, given)
     history.replaceState(null, '', location.pathname)
   }
-  const headers = { 'x-levelstead-token': given ?? sessionStorage.getItem(TOKEN) ?? '', 'content-type': 'application/json' }
+  const headers = {
+    'x-levelstead-token': given ?? sessionStorage.getItem(TOKEN) ?? '',
+    'content-type': 'application/json',
+  }
   return {
     async call(request) {
       try {
-        const response = await fetch(`/call/${request.name}`, { method: 'POST', headers, body: JSON.stringify(request) })
+        const response = await fetch(`/call/${request.name}`, {
+          method: 'POST',
+          headers,
+          body: JSON.stringify(request),
+        })
         return (await response.json()) as Envelope
       } catch (error) {
         throw new Fault('core.lost', {}, { cause: error })
@@ -111,7 +121,11 @@ function loopback(): Bridge {
 }
 
 /** Reads lines of progress for as long as the window stands; the open line also tells the core that it does. */
-async function follow(headers: HeadersInit, listener: (progress: Progress) => void, signal: AbortSignal): Promise<void> {
+async function follow(
+  headers: HeadersInit,
+  listener: (progress: Progress) => void,
+  signal: AbortSignal,
+): Promise<void> {
   try {
     const response = await fetch('/progress', { headers, signal })
     const reader = response.body!.pipeThrough(new TextDecoderStream()).getReader()

@@ -100,7 +100,7 @@ export class ProjectState {
   }
 
   async correct(round: Draft, reason: string): Promise<void> {
-    this.#take(await call('rounds/correct', { round, reason }))
+    this.#take(await call('rounds/correct', { round: { ...round }, reason }))
   }
 
   async baseline(round: string, reason: string): Promise<void> {

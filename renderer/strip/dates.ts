@@ -1,0 +1,9 @@
+/** Days as the window shows them; files keep yyyy-mm-dd. */
+const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec']
+
+/** `16 Nov 26`; what is no day is shown as it stands. */
+export function shortDate(date: string): string {
+  const parts = /^(\d{4})-(\d{2})-(\d{2})/.exec(date)
+  const month = parts && MONTHS[Number(parts[2]) - 1]
+  return parts && month ? `${Number(parts[3])} ${month} ${parts[1]!.slice(2)}` : date
+}
