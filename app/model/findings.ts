@@ -116,6 +116,18 @@ export interface SuspectReading {
   error_mm: number
 }
 
+/** A benchmark freed and found again from the others. */
+export interface BenchmarkCheck {
+  point: string
+  level_m: number
+  found_m: number
+  /** Found less published. */
+  difference_mm: number
+  sd_mm: number
+  /** Within its interval at the criteria's confidence. */
+  agrees: boolean
+}
+
 export interface Levelling {
   degrees_of_freedom: number
   /** Absent with no redundancy. */

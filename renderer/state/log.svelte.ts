@@ -5,7 +5,14 @@
 import type { RoundView } from '../../app/contract/views.ts'
 import { faultsOf, type FaultRecord } from '../../app/model/faults.ts'
 import type { Cells } from '../log/grid-cells.ts'
-import { readRound, textOf, withoutBlankRows, type HeadText, type ReadRound, type RoundText } from '../log/round-cells.ts'
+import {
+  readRound,
+  textOf,
+  withoutBlankRows,
+  type HeadText,
+  type ReadRound,
+  type RoundText,
+} from '../log/round-cells.ts'
 import { contextOf } from './context.ts'
 import type { Draft, ProjectState } from './project.svelte.ts'
 import type { VisitState } from './visit.svelte.ts'

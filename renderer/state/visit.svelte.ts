@@ -8,17 +8,9 @@ import type { Building } from '../../app/model/building.ts'
 import { faultsOf, type FaultRecord } from '../../app/model/faults.ts'
 import type { RoundFindings, Status } from '../../app/model/findings.ts'
 import { call } from '../client.svelte.ts'
+import type { Visit } from '../strip/places.ts'
 import { contextOf } from './context.ts'
 import type { Draft, ProjectState } from './project.svelte.ts'
-
-/** A mark on the strip of visits. */
-export interface Visit {
-  id: string
-  date: string
-  isDraft: boolean
-  isBaseline: boolean
-  status: Status
-}
 
 type Made<T> = { value: T; faults?: undefined } | { value?: undefined; faults: readonly FaultRecord[] }
 

@@ -1,5 +1,14 @@
 /** Where the visits stand on the strip: to a time scale, no two marks on each other, dates where there is room. */
-import type { Visit } from '../state/visit.svelte.ts'
+import type { Status } from '../../app/model/findings.ts'
+
+/** A mark on the strip of visits. */
+export interface Visit {
+  id: string
+  date: string
+  isDraft: boolean
+  isBaseline: boolean
+  status: Status
+}
 
 /** Marks closer than this could not be hit; dates need more, px. */
 const LEAST = 18
