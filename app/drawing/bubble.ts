@@ -20,10 +20,13 @@ export interface Bubble {
 /** A bubble for a name in a room of so many mm; a long name makes it longer, and is cut where there is no room. */
 export function bubbleFor(name: string, room: number): Bubble {
   const radius = Math.min(BUBBLE, room / 2)
-  const size = Math.min(TEXT, radius * 0.95)
-  const words = fitText(name, Math.min(room - 2.4, LONGEST), size) || fitText(name, room - 0.4, size)
+  const inner = Math.min(room - 1.4, LONGEST)
+  const largest = Math.min(TEXT, radius * 0.95)
+  // A little smaller is better than cut.
+  const size = textWidth(name, largest) > inner ? largest * 0.85 : largest
+  const words = fitText(name, inner, size)
   const width = textWidth(words, size)
-  return { words, size, radius, half: width <= 2 * radius - 1.6 ? radius : Math.min(width / 2 + 1.2, room / 2) }
+  return { words, size, radius, half: width <= 2 * radius - 1.4 ? radius : Math.min(width / 2 + 1.2, room / 2) }
 }
 
 export function drawBubble(bubble: Bubble, [x, y]: Point, extra: Extra, isSelected = false): Primitive[] {
@@ -57,9 +60,15 @@ function pill(role: Role, x: number, y: number, half: number, radius: number, ex
 }
 
 /** A status mark; a ring round it says that the value is borderline. */
-export function statusMark(status: Status, certainty: Certainty, at: Point, extra: Extra = {}): Primitive[] {
-  if (certainty === 'clear' || status === 'none') return [mark(status, at, MARK, extra)]
-  return [mark(status, at, MARK * 0.72, extra), ring(`status-${status}`, at, MARK * 0.64, extra)]
+export function statusMark(
+  status: Status,
+  certainty: Certainty,
+  at: Point,
+  extra: Extra = {},
+  size = MARK,
+): Primitive[] {
+  if (certainty === 'clear' || status === 'none') return [mark(status, at, size, extra)]
+  return [mark(status, at, size * 0.72, extra), ring(`status-${status}`, at, size * 0.64, extra)]
 }
 
 /** A circle that has no filling, whatever its role: a path that is not closed. */

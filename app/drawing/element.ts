@@ -95,7 +95,9 @@ function weighted(style: Style, weight = 1): Style {
 
 function stepText(step: PathStep): string {
   if (step.to === 'close') return 'Z'
-  const pair = ([x, y]: readonly [number, number]) => `${mm(x)} ${mm(y)}`
+  function pair([x, y]: readonly [number, number]) {
+    return `${mm(x)} ${mm(y)}`
+  }
   if (step.to === 'curve') return `C${pair(step.c1)} ${pair(step.c2)} ${pair(step.at)}`
   return `${step.to === 'move' ? 'M' : 'L'}${pair(step.at)}`
 }

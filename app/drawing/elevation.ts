@@ -7,10 +7,10 @@ import { intervalFactor } from '../assess/confidence.ts'
 import { criteriaOf, type Building, type Criteria, type FrameLine } from '../model/building.ts'
 import { Fault } from '../model/faults.ts'
 import { worse, type RoundFindings, type Status } from '../model/findings.ts'
-import { deformedLine, factorFor } from './elevation/deformed.ts'
+import { deformedLine, factorFor, largestFactor } from './elevation/deformed.ts'
 import { frameIn, roomBeside, weightOf, type DrawnFrame } from './elevation/frame.ts'
 import { depthOf, drawGround, levelMarks, LEVEL_WIDTH, OVERHANG } from './elevation/ground.ts'
-import { drawLabels, drawSectionNames, flagWords, isUsed } from './elevation/labels.ts'
+import { drawLabels, drawSectionNames, flaggedMembers, flagWords, isUsed } from './elevation/labels.ts'
 import {
   deformedEntry,
   drawLegend,
@@ -29,7 +29,7 @@ import { bubbleRow, dimensionRow, distortionRow, settlementRow, type Row } from 
 import type { Primitive, Scene, Target } from './scene.ts'
 import { baselineFor, text } from './shapes.ts'
 import { EDGE, SMALL, TEXT } from './sizes.ts'
-import { textWidth } from './text-width.ts'
+import { fitText, textWidth } from './text-width.ts'
 
 export interface ElevationLayers {
   deformed: boolean
@@ -64,6 +64,7 @@ const TITLES_FROM = 120
 interface Layout {
   frame: DrawnFrame
   factor: number
+  mostFactor: number
   moments: MomentScale
   legend: Entry[][]
   rows: Row[]
@@ -71,14 +72,21 @@ interface Layout {
   below: number
 }
 
-export function elevation(input: ElevationInput): Scene {
+export interface ElevationScene extends Scene {
+  /** Exaggeration of the deformed line as drawn. */
+  factor: number
+  /** The largest at which it stays on the sheet: the end of a slider. */
+  mostFactor: number
+}
+
+export function elevation(input: ElevationInput): ElevationScene {
   const { building, width, height, findings, selected } = input
   const found = building.frame_lines.find((l) => l.id === input.line)
   if (!found) throw new Fault('element.unknown', { value: input.line, element: { kind: 'line', id: input.line } })
   if (found.nodes.length === 0) return empty(input)
   const show = { deformed: true, moments: true, loads: false, labels: true, ...input.show }
   const z = intervalFactor(criteriaOf(building).confidence)
-  const { frame, factor, moments, legend, rows } = layOut(input, found, show, z)
+  const { frame, factor, mostFactor, moments, legend, rows } = layOut(input, found, show, z)
 
   const column = columnWidth(width)
   const left = frame.box.x - OVERHANG
@@ -88,16 +96,17 @@ export function elevation(input: ElevationInput): Scene {
   const diagrams = show.moments ? momentDiagrams(frame, moments) : []
   const within = { x: left + 0.5, y: EDGE + legend.length * LEGEND_ROW, width: width - EDGE - left - 0.5, height: 0 }
   within.height = frame.box.y + frame.box.height - within.y
+  const loads = show.loads ? drawLoads(frame, within) : { drawn: [], boxes: [] }
   const figures = !show.labels
     ? []
     : findings
       ? drawLabels(frame, criteriaOf(building), diagrams, deformed.curves, within)
-      : drawSectionNames(frame, within, show.loads)
+      : drawSectionNames(frame, within, loads.boxes)
   const primitives: Primitive[] = [
     ...drawSelection(frame, selected),
     ...ground.drawn,
     ...drawMoments(found.id, diagrams, weightOf(frame)),
-    ...(show.loads ? drawLoads(frame) : []),
+    ...loads.drawn,
     ...drawMembers(frame, z),
     ...drawPins(frame),
     ...deformed.drawn,
@@ -106,7 +115,7 @@ export function elevation(input: ElevationInput): Scene {
     ...rows.flatMap((r) => r.drawn),
     ...drawLegend(legend, EDGE, EDGE),
   ]
-  return { width, height, title: titleOf(input, found), primitives }
+  return { width, height, title: titleOf(input, found), primitives, factor, mostFactor }
 }
 
 /** Finds the scale at which the frame and all that stands above and below it fill the sheet and no more. */
@@ -128,14 +137,15 @@ function layOut(input: ElevationInput, found: FrameLine, show: ElevationLayers, 
 }
 
 function dress(
-  { building, findings, width, factor: given, selected }: ElevationInput,
+  { building, findings, width, height, factor: given, selected }: ElevationInput,
   frame: DrawnFrame,
   show: ElevationLayers,
   z: number,
 ): Layout {
   const room = roomBeside(frame)
   const nodes = frame.finding?.nodes ?? []
-  const factor = given ?? factorFor(nodes, frame.scale, room * 0.35)
+  const mostFactor = largestFactor(frame, { x: EDGE, y: EDGE, width: width - 2 * EDGE, height: height - 2 * EDGE })
+  const factor = Math.min(mostFactor, given ?? factorFor(nodes, frame.scale, room * 0.35))
   const moments = momentScale(frame, room)
   const legend = legendRows(entriesOf(frame, criteriaOf(building), show, factor, moments), width - 2 * EDGE)
   const supports = new Map(findings?.supports.map((s) => [s.support, s]))
@@ -156,6 +166,7 @@ function dress(
   return {
     frame,
     factor,
+    mostFactor,
     moments,
     legend,
     rows,
@@ -190,8 +201,7 @@ function entriesOf(
     const shown = new Set(held.map((x) => x.status))
     for (const status of ['red', 'amber', 'green', 'none'] as const)
       if (shown.has(status)) entries.push(statusEntry(status, status === 'none' ? 'no capacity given' : status))
-    const flagged = finding.members.filter((m) => m.status === 'red' || m.status === 'amber')
-    const figures = show.labels ? flagged.map((m) => flagWords(m, criteria)) : []
+    const figures = show.labels ? flaggedMembers(frame).map((m) => flagWords(m.finding, criteria)) : []
     if (figures.some((f) => f !== '' && !isUsed(f))) entries.push(wordsEntry('% of capacity, induced'))
     if (figures.some(isUsed)) entries.push(wordsEntry('% used: with the loads'))
   }
@@ -206,7 +216,14 @@ function titleOf({ line, findings }: ElevationInput, frame: FrameLine): string {
   return `${what}, round ${findings.id}; worst flag ${status}`
 }
 
-function empty({ line, width, height }: ElevationInput): Scene {
+function empty({ line, width, height }: ElevationInput): ElevationScene {
   const words = `Frame line ${line} has no nodes yet`
-  return { width, height, title: words, primitives: [text('text-quiet', [width / 2, height / 2], words, TEXT)] }
+  return {
+    width,
+    height,
+    title: words,
+    factor: 1,
+    mostFactor: 1,
+    primitives: [text('text-quiet', [width / 2, height / 2], fitText(words, width - 2 * EDGE, TEXT), TEXT)],
+  }
 }

@@ -17,7 +17,7 @@ export const LEGEND_ROW = 5
 export function deformedEntry(factor: number): Entry {
   return {
     width: 8,
-    words: `deformed, \u00d7 ${factor}`,
+    words: `deformed, \u00d7 ${Number(factor.toPrecision(3))}`,
     draw: (x, y) => [line('deformed', [x, y], [x + 8, y])],
   }
 }

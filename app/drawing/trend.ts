@@ -101,8 +101,12 @@ export function trend(input: TrendInput): Scene {
   const top = EDGE + 7
   const bottom = height - EDGE - 9
   const pad = Math.min(4, (right - left) * 0.04)
-  const share = (day: number) => (to > from ? (day - from) / (to - from) : 0.5)
-  const part = (value: number) => (value * kind.factor - low) / (high - low)
+  function share(day: number) {
+    return to > from ? (day - from) / (to - from) : 0.5
+  }
+  function part(value: number) {
+    return (value * kind.factor - low) / (high - low)
+  }
   const axes: Axes = {
     x: (day) => left + pad + share(day) * (right - left - 2 * pad),
     y: (value) => (kind.isDown ? top + part(value) * (bottom - top) : bottom - part(value) * (bottom - top)),
@@ -113,6 +117,10 @@ export function trend(input: TrendInput): Scene {
   }
   const heading = `${quantity === 'end moment' ? 'induced end moment' : quantity}${series.length === 1 ? ` of ${first!.name}` : ''}, ${kind.unit}`
   const far = triggers.filter((t) => !t.isNear).map((t) => `${t.status} ${kind.words(t.value)}`)
+  const nearTriggers = triggers
+    .filter((t) => t.isNear)
+    .map((t) => ({ status: t.status, words: `${t.status} ${kind.words(t.value)}`, at: axes.y(t.value) }))
+  const spoken = said.map((p): Point => [axes.x(dayOf(p.date)), axes.y(p.value)])
   const primitives: Primitive[] = [
     text('text-quiet', [EDGE, baselineFor(EDGE + 2, SMALL)], fitText(heading, width * 0.6, SMALL), SMALL, 'start'),
     ...(far.length > 0
@@ -129,7 +137,7 @@ export function trend(input: TrendInput): Scene {
     ...drawAxes(axes, ticks, from, to),
     ...(fit.length > 1 ? drawFit(fit, axes) : []),
     ...(input.date === undefined ? [] : current(dayOf(input.date), axes)),
-    ...triggers.filter((t) => t.isNear).flatMap((t) => triggerLine(t.status, t.value, kind.words(t.value), axes)),
+    ...triggerLines(nearTriggers, spoken, axes),
     ...[...series].reverse().flatMap((s) => drawSeries(s, s === first ? kind.role : 'series-other', input, axes)),
     ...(series.length > 1 ? endNames(names, kind.role, axes) : []),
   ]
@@ -157,7 +165,9 @@ function drawAxes(
 }
 
 function drawFit(fit: readonly BandPoint[], { x, y }: Axes): Primitive[] {
-  const at = (p: BandPoint, value: number): Point => [x(dayOf(p.date)), y(value)]
+  function at(p: BandPoint, value: number): Point {
+    return [x(dayOf(p.date)), y(value)]
+  }
   return [
     polygon('band', [...fit.map((p) => at(p, p.high)), ...[...fit].reverse().map((p) => at(p, p.low))]),
     polyline(
@@ -172,14 +182,45 @@ function current(day: number, { x, top, bottom, left, right }: Axes): Primitive[
   return at < left || at > right ? [] : [line('axis', [at, top], [at, bottom])]
 }
 
-function triggerLine(status: 'amber' | 'red', value: number, words: string, { y, left, right }: Axes): Primitive[] {
-  const at = y(value)
-  const label = `${status} ${words}`
-  return [
-    line(`trigger-${status}`, [left, at], [right, at], { label }),
-    mark(status, [left + 2, at - 2.4], MARK, { label }),
-    text('text', [left + 4.2, at - 1.3], label, SMALL, 'start', { label }),
-  ]
+/** Lines of the triggers; each has its words over or under it, where they hide neither a value nor each other. */
+function triggerLines(
+  triggers: readonly { status: 'amber' | 'red'; words: string; at: number }[],
+  points: readonly Point[],
+  { left, right, top, bottom }: Axes,
+): Primitive[] {
+  const wanted = triggers.map(({ words, at }) => {
+    const width = MARK + 1 + textWidth(words, SMALL)
+    const xs = [left + 1 + width / 2, right - 1 - width / 2]
+    return {
+      width,
+      height: MARK,
+      places: xs.flatMap((x): Point[] => [
+        [x, at - 2.2],
+        [x, at + 2.2],
+      ]),
+    }
+  })
+  const within = { x: left, y: top - 4, width: right - left, height: bottom - top + 4 }
+  const segments = triggers.map(
+    ({ at }) =>
+      [
+        [left, at],
+        [right, at],
+      ] as const,
+  )
+  const soft = points.slice(1).map((p, i) => [points[i]!, p] as const)
+  const boxes = placeLabels(wanted, { within, segments, soft })
+  return triggers.flatMap(({ status, words, at }, i): Primitive[] => {
+    const box = boxes[i]
+    const rule = line(`trigger-${status}`, [left, at], [right, at], { label: words })
+    if (!box) return [rule]
+    const y = box.y + box.height / 2
+    return [
+      rule,
+      mark(status, [box.x + MARK / 2, y], MARK, { label: words }),
+      text('text', [box.x + MARK + 1, baselineFor(y, SMALL)], words, SMALL, 'start', { label: words }),
+    ]
+  })
 }
 
 function drawSeries(
@@ -189,7 +230,9 @@ function drawSeries(
   { x, y }: Axes,
 ): Primitive[] {
   const { words, isMagnitude } = KINDS[quantity]
-  const at = (p: TrendPoint): Point => [x(dayOf(p.date)), y(p.value)]
+  function at(p: TrendPoint): Point {
+    return [x(dayOf(p.date)), y(p.value)]
+  }
   const bars = points.flatMap((p): Primitive[] => {
     const [px, half] = [x(dayOf(p.date)), role === 'series-other' ? 0 : z * p.sd]
     if (half === 0) return []

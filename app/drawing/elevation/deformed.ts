@@ -5,6 +5,7 @@
  */
 import type { NodeFinding } from '../../model/findings.ts'
 import { niceBelow } from '../nice.ts'
+import type { Box } from '../place-labels.ts'
 import type { Point, Primitive, Target } from '../scene.ts'
 import { weightOf, type DrawnFrame, type DrawnMember } from './frame.ts'
 
@@ -21,6 +22,26 @@ export function factorFor(nodes: readonly NodeFinding[], scale: number, room: nu
   const largest = largestDisplacement(nodes)
   if (!(largest > 1e-6) || !(scale > 0)) return 1
   return Math.max(1, niceBelow((Math.min(AIM, room) * 1000) / (largest * scale)))
+}
+
+/** The factor at which the deformed line would touch the edge of a box; a curve stays within its four points. */
+export function largestFactor(frame: DrawnFrame, within: Box): number {
+  const nodes = new Map(frame.finding?.nodes.map((n) => [n.node, n]))
+  let most = 1e6
+  for (const member of frame.members) {
+    const at0 = deformedCurve(member, nodes, frame.scale, 0)
+    const at1 = deformedCurve(member, nodes, frame.scale, 1)
+    if (!at0 || !at1) continue
+    for (const key of ['from', 'c1', 'c2', 'to'] as const) {
+      const [dx, dy] = [at1[key][0] - at0[key][0], at1[key][1] - at0[key][1]]
+      const room = [
+        dx > 0 ? (within.x + within.width - at0[key][0]) / dx : dx < 0 ? (within.x - at0[key][0]) / dx : Infinity,
+        dy > 0 ? (within.y + within.height - at0[key][1]) / dy : dy < 0 ? (within.y - at0[key][1]) / dy : Infinity,
+      ]
+      most = Math.min(most, ...room)
+    }
+  }
+  return Math.max(0, most >= 10 ? Math.floor(most) : most)
 }
 
 export interface Curve {
@@ -40,7 +61,9 @@ export function deformedCurve(
   const [a, b] = [nodes.get(member.from), nodes.get(member.to)]
   if (!a || !b || length === 0) return undefined
   const enlarged = (factor * scale) / 1000
-  const moved = (p: Point, n: NodeFinding): Point => [p[0] + n.x_mm * enlarged, p[1] + n.down_mm * enlarged]
+  function moved(p: Point, n: NodeFinding): Point {
+    return [p[0] + n.x_mm * enlarged, p[1] + n.down_mm * enlarged]
+  }
   const [start, end] = [moved(from, a), moved(to, b)]
   const along: Point = [(to[0] - from[0]) / length, (to[1] - from[1]) / length]
   // Across the member towards its right-hand side: where a clockwise turn takes the far end on a sheet whose y grows down.
@@ -48,7 +71,9 @@ export function deformedCurve(
   const chord = dot([b.x_mm - a.x_mm, b.down_mm - a.down_mm], across) / (length / scale) / 1000
   const turns = endRotations(a.rotation_rad, b.rotation_rad, chord, member.pin_from === true, member.pin_to === true)
   const stretch = dot([end[0] - start[0], end[1] - start[1]], along) / 3
-  const sway = (turn: number) => (length * factor * turn) / 3
+  function sway(turn: number) {
+    return (length * factor * turn) / 3
+  }
   return {
     from: start,
     c1: shifted(shifted(start, along, stretch), across, sway(turns[0])),

@@ -65,10 +65,9 @@ export function frameIn(building: Building, line: FrameLine, room: Box, findings
   const width = (extent.right - extent.left) * scale
   const left = room.x + (room.width - width) / 2
   const floor = room.y + room.height
-  const place = (x_m: number, z_m: number): Point => [
-    left + (x_m - extent.left) * scale,
-    floor - (z_m - extent.low) * scale,
-  ]
+  function place(x_m: number, z_m: number): Point {
+    return [left + (x_m - extent.left) * scale, floor - (z_m - extent.low) * scale]
+  }
   const nodes = new Map(line.nodes.map((n) => [n.id, n]))
   const members = line.members.flatMap((member): DrawnMember[] => {
     const [a, b] = [nodes.get(member.from), nodes.get(member.to)]

@@ -31,7 +31,7 @@ export function drawLabels(
   curves: readonly Curve[],
   within: Box,
 ): Primitive[] {
-  const flagged = flaggedMembers(frame).filter(({ drawn }) => drawn.length >= LEAST_LENGTH)
+  const flagged = flaggedMembers(frame)
   const marks = flagged.map(({ drawn, finding }) => markOf(frame, drawn, finding))
   const taken = flagged.map(({ drawn }) => around(between(drawn.from, drawn.to, 0.5), MARK))
   const segments = frame.members.map((m) => [m.from, m.to] as const)
@@ -49,14 +49,14 @@ export function drawLabels(
 }
 
 /** Names of sections along the members of a frame that is only described. */
-export function drawSectionNames(frame: DrawnFrame, within: Box, hasLoads: boolean): Primitive[] {
+export function drawSectionNames(frame: DrawnFrame, within: Box, loads: readonly Box[]): Primitive[] {
   const wanted = frame.members.flatMap(({ member, from, to, length }): Label[] => {
     const width = textWidth(member.section, SMALL)
     const isFlat = Math.abs(to[0] - from[0]) > 2 * Math.abs(to[1] - from[1])
     const middle = between(from, to, 0.5)
     if (isFlat && width > length - 3) return []
     const places: Point[] = isFlat
-      ? [...(hasLoads ? [] : [[middle[0], middle[1] - 2.2] as const]), [middle[0], middle[1] + 2.2]]
+      ? [...(loads.length > 0 ? [] : [[middle[0], middle[1] - 2.2] as const]), [middle[0], middle[1] + 2.2]]
       : [
           [middle[0] + width / 2 + 1.4, middle[1]],
           [middle[0] - width / 2 - 1.4, middle[1]],
@@ -64,7 +64,7 @@ export function drawSectionNames(frame: DrawnFrame, within: Box, hasLoads: boole
     return [labelOf(member.section, 'text-quiet', SMALL, places, { target: memberTarget(frame.line.id, member.id) })]
   })
   const segments = frame.members.map((m) => [m.from, m.to] as const)
-  return textsAt(wanted, placeLabels(wanted, { within, segments }))
+  return textsAt(wanted, placeLabels(wanted, { within, segments, boxes: loads }))
 }
 
 function textsAt(labels: readonly Label[], boxes: readonly (Box | undefined)[]): Primitive[] {
@@ -82,14 +82,14 @@ function labelOf(words: string, role: Role, size: number, places: readonly Point
   return { words, role, size, extra, places, width: textWidth(words, size, weight), height: size * CAP_HEIGHT }
 }
 
-/** Members at amber or red, the worst first. */
-function flaggedMembers(frame: DrawnFrame): { drawn: DrawnMember; finding: MemberFinding }[] {
+/** Members at amber or red that are long enough for a mark, the worst first. */
+export function flaggedMembers(frame: DrawnFrame): { drawn: DrawnMember; finding: MemberFinding }[] {
   const drawnOf = new Map(frame.members.map((m) => [m.member.id, m]))
   return (frame.finding?.members ?? [])
     .filter((m) => m.status === 'amber' || m.status === 'red')
     .flatMap((finding) => {
       const drawn = drawnOf.get(finding.member)
-      return drawn ? [{ drawn, finding }] : []
+      return drawn && drawn.length >= LEAST_LENGTH ? [{ drawn, finding }] : []
     })
     .sort((a, b) => byWorst(a.finding.status, b.finding.status) || severity(b.finding) - severity(a.finding))
 }
@@ -111,8 +111,9 @@ export function isUsed(words: string): boolean {
 
 /** The figure that made the flag: the share of capacity induced, or what is used of it with the loads. */
 export function flagWords(finding: MemberFinding, { induced_fraction, utilisation }: Criteria): string {
-  const reached = (value: number | undefined, triggers: { amber: number; red: number }): number =>
-    value === undefined || value < triggers.amber ? 0 : value < triggers.red ? 1 : 2
+  function reached(value: number | undefined, triggers: { amber: number; red: number }): number {
+    return value === undefined || value < triggers.amber ? 0 : value < triggers.red ? 1 : 2
+  }
   const byUse = reached(finding.utilisation, utilisation) > reached(finding.induced_fraction, induced_fraction)
   if (byUse) return `${wholePercent(finding.utilisation!)} ${USED}`
   return finding.induced_fraction === undefined ? '' : wholePercent(finding.induced_fraction)
@@ -125,12 +126,12 @@ function fractionLabel(
   finding: MemberFinding,
 ): Label[] {
   const words = flagWords(finding, criteria)
-  if (words === '') return []
   const width = textWidth(words, TEXT, 'medium')
   const [x, y] = between(from, to, 0.5)
   const up = TEXT * 0.36 + 2.3
   const side = width / 2 + 2
   const isFlat = Math.abs(to[0] - from[0]) >= Math.abs(to[1] - from[1])
+  if (words === '' || (isFlat && width > length - 0.5)) return []
   const beside: Point[] = [
     [x + side, y - up],
     [x - side, y - up],
@@ -179,13 +180,15 @@ function momentLabels(frame: DrawnFrame, diagrams: readonly MomentDiagram[]): La
   return ends
     .filter((e) => Math.abs(e.value) >= WORTH * most)
     .sort((a, b) => Math.abs(b.value) - Math.abs(a.value))
-    .map(({ drawn, finding, value, foot, tip, other, end }) => {
+    .map(({ drawn, value, foot, tip, other, end }) => {
       const words = moment(Math.abs(value))
       const width = textWidth(words, SMALL)
       const length = Math.hypot(tip[0] - foot[0], tip[1] - foot[1]) || 1
       const out: Point = [(tip[0] - foot[0]) / length, (tip[1] - foot[1]) / length]
       const inward: Point = [(other[0] - foot[0]) / drawn.length, (other[1] - foot[1]) / drawn.length]
-      const reach = (d: Point) => (Math.abs(d[0]) * width + Math.abs(d[1]) * SMALL * CAP_HEIGHT) / 2
+      function reach(d: Point) {
+        return (Math.abs(d[0]) * width + Math.abs(d[1]) * SMALL * CAP_HEIGHT) / 2
+      }
       const places = [1, 1.8, 0.2, 2.6].flatMap((along) =>
         [0.7, 1.6].map((beyond): Point => {
           const o = reach(out) + beyond
@@ -194,7 +197,7 @@ function momentLabels(frame: DrawnFrame, diagrams: readonly MomentDiagram[]): La
         }),
       )
       const target = { ...memberTarget(frame.line.id, drawn.member.id), end } as Extra['target']
-      return { ...labelOf(words, 'text-moment', SMALL, places, { target }), isShy: finding.status !== 'red' }
+      return { ...labelOf(words, 'text-moment', SMALL, places, { target }), isShy: Math.abs(value) < most }
     })
 }
 

@@ -19,7 +19,9 @@ export function levelsOf(frame: DrawnFrame, depths: readonly number[], gap: numb
   }
   const low = Math.min(...counts.keys())
   const high = Math.max(...counts.keys())
-  const rank = (z: number) => (z === low || z === high ? Infinity : counts.get(z)!)
+  function rank(z: number) {
+    return z === low || z === high ? Infinity : counts.get(z)!
+  }
   const kept: number[] = []
   for (const z of [...counts.keys()].sort((a, b) => rank(b) - rank(a) || a - b))
     if (kept.every((k) => Math.abs(k - z) * frame.scale >= gap)) kept.push(z)

@@ -58,7 +58,9 @@ export function wholePercent(fraction: number): string {
 
 function memberLabel({ member }: DrawnMember, finding: MemberFinding | undefined, z: number): string {
   if (!finding) return `${kindWord(member.kind)} ${member.id}, ${member.section}`
-  const at = (value: number, sd: number) => `${moment(value)} \u00b1 ${moment(z * sd)}`
+  function at(value: number, sd: number) {
+    return `${moment(value)} \u00b1 ${moment(z * sd)}`
+  }
   const said = [
     `${kindWord(member.kind)} ${member.id}: induced ${at(finding.moment_from_kNm, finding.sd_from_kNm)} and ${at(finding.moment_to_kNm, finding.sd_to_kNm)} kNm`,
   ]

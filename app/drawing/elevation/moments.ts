@@ -43,10 +43,9 @@ export function tipsOf(drawn: DrawnMember, finding: MemberFinding, mmPerKNm: num
   const { from, to, length } = drawn
   // The right-hand side looking from `from` to `to`, on a sheet whose y grows downwards.
   const right: Point = length === 0 ? [0, 0] : [-(to[1] - from[1]) / length, (to[0] - from[0]) / length]
-  const tip = (p: Point, bending: number): Point => [
-    p[0] + right[0] * bending * mmPerKNm,
-    p[1] + right[1] * bending * mmPerKNm,
-  ]
+  function tip(p: Point, bending: number): Point {
+    return [p[0] + right[0] * bending * mmPerKNm, p[1] + right[1] * bending * mmPerKNm]
+  }
   return { fromTip: tip(from, finding.moment_from_kNm), toTip: tip(to, -finding.moment_to_kNm) }
 }
 

@@ -22,6 +22,17 @@ export interface Row {
 const ARROW = 7
 const LINE = 3.9
 
+/** Turned figures nearer than this lie on each other. */
+const TURNED_PITCH = 3
+
+/** Of figures too near to each other the greatest are kept. */
+function keepApart(places: readonly { x: number; weight: number }[]): (x: number) => boolean {
+  const kept: number[] = []
+  for (const { x } of [...places].sort((a, b) => b.weight - a.weight))
+    if (kept.every((k) => Math.abs(k - x) >= TURNED_PITCH)) kept.push(x)
+  return (x) => kept.includes(x)
+}
+
 /** Arrows in the ratio of the settlements, the value ± its interval below each. */
 export function settlementRow(
   frame: DrawnFrame,
@@ -41,6 +52,7 @@ export function settlementRow(
   const tall = Math.max(...shown.map((s) => Math.max(textWidth(s.value, TEXT, 'medium'), textWidth(s.interval, SMALL))))
   const setting = wide <= room ? 'one line' : tall <= room ? 'two lines' : 'turned'
   const most = Math.max(...shown.map((s) => Math.abs(s.finding.settlement_mm)))
+  const isKept = keepApart(shown.map((s) => ({ x: s.base.at[0], weight: Math.abs(s.finding.settlement_mm) })))
   const drawn = shown.flatMap(({ base, finding, value, interval }): Primitive[] => {
     const x = base.at[0]
     const target: Target = { kind: 'support', id: base.support }
@@ -62,7 +74,7 @@ export function settlementRow(
     } else if (setting === 'two lines') {
       shape.push(text('text-strong', [x, y], value, TEXT, 'middle', extra))
       shape.push(text('text-quiet', [x, y + LINE - 0.3], interval, SMALL, 'middle', extra))
-    } else {
+    } else if (isKept(x)) {
       const at: Point = [baselineFor(x, TEXT), top + ARROW + 1.2]
       shape.push(text('text-strong', at, value, TEXT, 'end', { ...extra, turn: -90 }))
     }
@@ -163,6 +175,9 @@ export function distortionRow(
   const room = Math.min(...shown.map((s) => s.right - s.left)) - 1.5
   const widest = Math.max(...shown.map((s) => textWidth(s.words, TEXT)))
   const setting = widest + MARK + 1.6 <= room ? 'beside' : widest <= room ? 'below' : 'turned'
+  const isKept = keepApart(
+    shown.map((s) => ({ x: (s.left + s.right) / 2, weight: Math.abs(s.span.angular_distortion_rad) })),
+  )
   const drawn = shown.flatMap(({ span, left, right, words }): Primitive[] => {
     const x = (left + right) / 2
     const target: Target = { kind: 'span', line: frame.line.id, from: span.from, to: span.to }
@@ -184,12 +199,13 @@ export function distortionRow(
       shapes.push(...statusMark(span.status, span.certainty, [start + MARK / 2, y], extra))
       shapes.push(text('text', [start + MARK + 1.2, baselineFor(y, TEXT)], words, TEXT, 'start', extra))
     } else {
-      shapes.push(...statusMark(span.status, span.certainty, [x, y], extra))
-      shapes.push(
-        setting === 'below'
-          ? text('text', [x, top + 7.2], words, TEXT, 'middle', extra)
-          : text('text', [baselineFor(x, TEXT), top + 4.4], words, TEXT, 'end', { ...extra, turn: -90 }),
-      )
+      shapes.push(...statusMark(span.status, span.certainty, [x, y], extra, Math.min(MARK, right - left - 0.5)))
+      if (setting === 'below' || isKept(x))
+        shapes.push(
+          setting === 'below'
+            ? text('text', [x, top + 7.2], words, TEXT, 'middle', extra)
+            : text('text', [baselineFor(x, TEXT), top + 4.4], words, TEXT, 'end', { ...extra, turn: -90 }),
+        )
     }
     return shapes
   })
@@ -198,6 +214,8 @@ export function distortionRow(
 }
 
 export function distortionLabel(span: SpanFinding, z: number): string {
-  const per = (rad: number) => fixed(rad * 1000, 2)
+  function per(rad: number) {
+    return fixed(rad * 1000, 2)
+  }
   return `Span ${span.from} to ${span.to}: angular distortion ${ratio(span.angular_distortion_rad)} (${per(span.angular_distortion_rad)} \u00b1 ${per(z * span.sd_rad)} in 1000); ${span.status}, ${span.certainty}`
 }

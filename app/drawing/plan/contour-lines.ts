@@ -9,6 +9,9 @@ import { CAP_HEIGHT, textWidth } from '../text-width.ts'
 import { contours, contourStep, type Contour } from './contours.ts'
 import type { PlanSupport } from './discs.ts'
 
+/** A contour shorter than this is explained by the value of the support that it goes round, mm. */
+const SHORTEST = 10
+
 export interface DrawnContours {
   step_mm: number
   lines: Contour[]
@@ -35,7 +38,8 @@ export function drawContours({ lines }: DrawnContours): Primitive[] {
 }
 
 export function contourLabels({ lines }: DrawnContours, obstacles: Obstacles): { drawn: Primitive[]; boxes: Box[] } {
-  const wanted = [...lines]
+  const wanted = lines
+    .filter((l) => lengthOf(l.points) >= SHORTEST)
     .sort((a, b) => lengthOf(b.points) - lengthOf(a.points))
     .map(({ value, points }) => {
       const words = contourWords(value)

@@ -53,7 +53,9 @@ function mesh(samples: readonly Sample[]): { points: Sample[]; triangles: Triang
     }
     used.add(other)
     const four = corners.map((k) => points[k]!)
-    const mean = (pick: (s: Sample) => number) => four.reduce((sum, s) => sum + pick(s), 0) / 4
+    function mean(pick: (s: Sample) => number) {
+      return four.reduce((sum, s) => sum + pick(s), 0) / 4
+    }
     const middle = points.push({ at: [mean((s) => s.at[0]), mean((s) => s.at[1])], value: mean((s) => s.value) }) - 1
     for (let k = 0; k < 4; k++) triangles.push([corners[k]!, corners[(k + 1) % 4]!, middle])
   }
@@ -67,8 +69,12 @@ function rectangle(a: Triangle, b: Triangle, points: readonly Sample[]): [number
   const [p, q] = shared as [number, number]
   const r = a.find((k) => !shared.includes(k))!
   const s = b.find((k) => !shared.includes(k))!
-  const at = (k: number) => points[k]!.at
-  const length = (i: number, j: number) => Math.hypot(at(i)[0] - at(j)[0], at(i)[1] - at(j)[1])
+  function at(k: number) {
+    return points[k]!.at
+  }
+  function length(i: number, j: number) {
+    return Math.hypot(at(i)[0] - at(j)[0], at(i)[1] - at(j)[1])
+  }
   const apart = Math.hypot(at(p)[0] + at(q)[0] - at(r)[0] - at(s)[0], at(p)[1] + at(q)[1] - at(r)[1] - at(s)[1])
   const diagonal = length(p, q)
   const isRectangle = apart < 0.05 * diagonal && Math.abs(diagonal - length(r, s)) < 0.02 * diagonal

@@ -28,7 +28,9 @@ export function planIn({ supports }: Building, room: Box): PlanFit {
   const scale = Math.min(MOST_MM_PER_M, w > 0 ? room.width / w : Infinity, h > 0 ? room.height / h : Infinity)
   const x0 = room.x + (room.width - w * scale) / 2
   const y0 = room.y + (room.height + h * scale) / 2
-  const place = (x_m: number, y_m: number): Point => [x0 + (x_m - left) * scale, y0 - (y_m - low) * scale]
+  function place(x_m: number, y_m: number): Point {
+    return [x0 + (x_m - left) * scale, y0 - (y_m - low) * scale]
+  }
   const placed = supports.map((s) => ({ id: s.id, at: place(s.x_m, s.y_m) }))
   return {
     scale,

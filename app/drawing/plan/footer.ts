@@ -14,10 +14,12 @@ export function scaleBar(scale: number, x: number, y: number, most: number): Pri
   const metres = niceBelow(most / scale, [1, 2, 5])
   const length = metres * scale
   const half = metres / 2
-  const tick = (at: number, words: string) => [
-    line('dimension', [at, y - 1], [at, y + 1]),
-    text('text-quiet', [at, y - 1.8], words, SMALL, at === x ? 'start' : 'middle'),
-  ]
+  function tick(at: number, words: string) {
+    return [
+      line('dimension', [at, y - 1], [at, y + 1]),
+      text('text-quiet', [at, y - 1.8], words, SMALL, at === x ? 'start' : 'middle'),
+    ]
+  }
   return [
     line('dimension', [x, y], [x + length, y]),
     ...tick(x, '0'),

@@ -142,7 +142,9 @@ function wantedPlaces({ from, to }: PlanLine, { half, radius }: Bubble, plan: Bo
   // Bubbles of an orthogonal grid stand in one row, wherever their lines begin.
   const inRow: Point =
     start === 'left' ? [plan.x - BUBBLE_AWAY + BUBBLE - half, near[1]] : [near[0], plan.y - BUBBLE_AWAY]
-  const beyond = (p: Point, s: number, away: number): Point => [p[0] + s * ux * away, p[1] + s * uy * away]
+  function beyond(p: Point, s: number, away: number): Point {
+    return [p[0] + s * ux * away, p[1] + s * uy * away]
+  }
   const reach = BUBBLE_AWAY + (half - radius) * Math.abs(ux)
   const centres = [
     ...(isStraight ? [inRow] : []),
