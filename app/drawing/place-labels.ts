@@ -31,6 +31,9 @@ export interface Obstacles {
   soft?: readonly (readonly [Point, Point])[]
 }
 
+/** Between a label and a line, mm. */
+const CLEAR = 0.3
+
 /** A box for each label, in their order; undefined where there was no room. */
 export function placeLabels(wanted: readonly Wanted[], obstacles: Obstacles, gap = 0.8): (Box | undefined)[] {
   const taken: Box[] = [...(obstacles.boxes ?? [])]
@@ -66,7 +69,8 @@ export function isInside(box: Box, within: Box): boolean {
 }
 
 function crossesAny(box: Box, segments: Obstacles['soft'] = []): boolean {
-  return segments.some(([a, b]) => crosses(box, a, b))
+  const grown = { x: box.x - CLEAR, y: box.y - CLEAR, width: box.width + 2 * CLEAR, height: box.height + 2 * CLEAR }
+  return segments.some(([a, b]) => crosses(grown, a, b))
 }
 
 /** Whether a segment has a part inside a box: Liang and Barsky's clipping. */

@@ -43,10 +43,11 @@ export function advances(font: Font): [number, string][] {
 }
 
 function source(): string {
-  const table = (name: string, weight: 'Regular' | 'Medium') =>
-    `export const ${name}: readonly (readonly [number, string])[] = [\n${advances(openFont(weight))
+  function table(name: string, weight: 'Regular' | 'Medium') {
+    return `export const ${name}: readonly (readonly [number, string])[] = [\n${advances(openFont(weight))
       .map(([first, widths]) => `  [${first}, '${widths}'],`)
       .join('\n')}\n]\n`
+  }
   return `/**
  * Advance widths of Roboto in units of its em: first code point of a run, then the widths. Written by
  * test/support/roboto-advances.ts; a test holds it against the font files.
