@@ -12,7 +12,8 @@ import { limits, method, notCovered, signOff, verification } from './sections/me
 import { titlePage } from './sections/title.ts'
 import { INK, QUIET, styles } from './style.ts'
 
-export function reportDocument(input: ReportInput): TDocumentDefinitions {
+/** `laidOut` is told the number of pages, which is known only once they are laid out. */
+export function reportDocument(input: ReportInput, laidOut: (pages: number) => void): TDocumentDefinitions {
   const { building, label, options, round, date } = input
   const side = MARGIN * POINTS
   return {
@@ -39,31 +40,39 @@ export function reportDocument(input: ReportInput): TDocumentDefinitions {
         },
       ],
     },
-    footer: (page, pages) => ({
-      margin: [side, 14, side, 0],
-      stack: [
-        {
-          canvas: [
-            {
-              type: 'line',
-              x1: 0,
-              y1: 0,
-              x2: (options.paper === 'A4' ? 595.28 : 612) - 2 * side,
-              y2: 0,
-              lineWidth: 0.4,
-              lineColor: QUIET,
-            },
-          ],
-        },
-        {
-          margin: [0, 5, 0, 0],
-          columns: [
-            { text: `${CAUTION_LINE} Local codes govern.`, fontSize: 8, color: INK, width: '*' },
-            { text: `page ${page} of ${pages}`, fontSize: 8, color: QUIET, width: 70, alignment: 'right' },
-          ],
-        },
-      ],
-    }),
+    // A heading never stands alone at the foot of a page.
+    pageBreakBefore: (node, nodes) =>
+      node.headlineLevel === 1 &&
+      nodes.getFollowingNodesOnPage().length === 0 &&
+      node.startPosition.verticalRatio > 0.5,
+    footer: (page, pages) => {
+      laidOut(pages)
+      return {
+        margin: [side, 14, side, 0],
+        stack: [
+          {
+            canvas: [
+              {
+                type: 'line',
+                x1: 0,
+                y1: 0,
+                x2: (options.paper === 'A4' ? 595.28 : 612) - 2 * side,
+                y2: 0,
+                lineWidth: 0.4,
+                lineColor: QUIET,
+              },
+            ],
+          },
+          {
+            margin: [0, 5, 0, 0],
+            columns: [
+              { text: `${CAUTION_LINE} Local codes govern.`, fontSize: 8, color: INK, width: '*' },
+              { text: `page ${page} of ${pages}`, fontSize: 8, color: QUIET, width: 70, alignment: 'right' },
+            ],
+          },
+        ],
+      }
+    },
     content: [
       ...titlePage(input),
       ...measured(input),

@@ -64,11 +64,10 @@ export function printer(): Printer {
       pdfmake.setFonts({ Roboto: fonts })
       pdfmake.setLocalAccessPolicy((path: string) => known.has(path))
       pdfmake.setUrlAccessPolicy(() => false)
-      const document = pdfmake.createPdf(reportDocument(input))
-      const stream = await document.getStream()
-      if (signal.aborted) throw new Fault('work.stopped')
-      const pages = (stream as unknown as { bufferedPageRange(): { count: number } }).bufferedPageRange().count
+      let pages = 0
+      const document = pdfmake.createPdf(reportDocument(input, (count) => (pages = count)))
       const pdf = new Uint8Array(await document.getBuffer())
+      if (signal.aborted) throw new Fault('work.stopped')
       return { pdf, pages }
     },
   }

@@ -21,6 +21,9 @@ const X_M = [0, 6, 11.4, 17.4]
 const Y_M = [0, 5.6, 11.2]
 const FLOORS_M = [3.6, 6.8, 10]
 
+/** Opened up in 2026: cover spalled, bottom bars corroded. */
+const WEAK_BEAM = 'A4-B4/2'
+
 const SECTIONS: Section[] = [
   {
     id: 'column 350x350',
@@ -71,7 +74,7 @@ export function exampleBuilding(): Building {
     client: 'Tannery Row Housing Trust',
     address: '2 Tannery Row, Millgate',
     notes:
-      'Three-storey concrete frame of 1962 on pad footings. A basement is being dug 4 m beyond grid line 4 since February 2026. Capacities from the reinforcement drawings, checked at two opened-up beams.',
+      'Three-storey concrete frame of 1962 on pad footings. A basement is being dug 4 m beyond grid line 4 since February 2026. Capacities from the reinforcement drawings, checked at two opened-up beams; beam A4-B4/2 has corroded bottom bars and is given less.',
     supports,
     sections: SECTIONS,
     frame_lines: [
@@ -121,6 +124,7 @@ function frameLine(id: string, supports: readonly string[], x: readonly number[]
         to: `${to}-${storey}`,
         section: storey === FLOORS_M.length ? 'roof beam 300x450' : 'beam 300x550',
         loads: floorLoads(id, storey),
+        ...(`${from}-${to}/${storey}` === WEAK_BEAM ? { capacity: { sagging_kNm: 105 } } : {}),
       })
     }
   })
@@ -132,8 +136,8 @@ function floorLoads(line: string, storey: number): MemberLoad[] {
   const roof = storey === FLOORS_M.length
   const carries = ROWS.includes(line)
   const inner = line === 'B'
-  const permanent = carries ? (inner ? 20 : 14) * (roof ? 0.7 : 1) : roof ? 4 : 9
+  const permanent = carries ? (inner ? 26 : 18) * (roof ? 0.7 : 1) : roof ? 5 : 12
   const loads: MemberLoad[] = [{ kind: 'uniform', kN_per_m: Math.round(permanent * 10) / 10, action: 'permanent' }]
-  if (carries) loads.push({ kind: 'uniform', kN_per_m: (inner ? 8 : 4.5) * (roof ? 0.5 : 1), action: 'variable' })
+  if (carries) loads.push({ kind: 'uniform', kN_per_m: (inner ? 10 : 6) * (roof ? 0.5 : 1), action: 'variable' })
   return loads
 }

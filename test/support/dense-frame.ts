@@ -150,8 +150,10 @@ export function denseResponse(frame: FrameArrays, cases: DenseCase): DenseResult
 /** Rows and columns that move freely, and the right-hand sides of a unit settlement of each base. */
 export function denseInfluenceProblem(frame: FrameArrays): { stiffness: Matrix; sides: Matrix } {
   const { whole, free } = denseSystem(frame)
+  const stiffness = whole.subMatrixRow(free).subMatrixColumn(free)
   return {
-    stiffness: whole.subMatrixRow(free).subMatrixColumn(free),
+    // Cholesky asks for symmetry to the last digit, which assembly by products does not keep.
+    stiffness: Matrix.add(stiffness, stiffness.transpose()).mul(0.5),
     sides: whole.subMatrixRow(free).subMatrixColumn(Array.from(frame.base, (node) => 3 * node + 1)),
   }
 }

@@ -13,7 +13,7 @@ export function drawings(input: ReportInput): Content[] {
   const width = textWidthOf(options.paper)
   const lines = worstLines(findings.frame_lines).slice(0, ELEVATIONS)
   const shown: Content[] = [
-    { text: 'Plan', style: 'heading', pageBreak: 'before' },
+    { text: 'Plan', style: 'heading', headlineLevel: 1, pageBreak: 'before' },
     drawing(plan({ building, findings, width, height: width * 0.72 })),
     {
       text: 'Settlement of the supports in mm, down positive; contours of settlement; frame lines by their worst flag.',
@@ -32,7 +32,11 @@ export function drawings(input: ReportInput): Content[] {
     shown.push({
       unbreakable: true,
       stack: [
-        { text: `Frame line ${line.id}${i === 0 && lines.length > 1 ? ', the worst' : ''}`, style: 'heading' },
+        {
+          text: `Frame line ${line.id}${i === 0 && lines.length > 1 ? ', the worst' : ''}`,
+          style: 'heading',
+          headlineLevel: 1,
+        },
         drawing(scene),
       ],
     })

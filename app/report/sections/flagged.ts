@@ -15,7 +15,7 @@ export function flagged(input: ReportInput): Content[] {
     .flatMap((line) => line.members.map((member) => ({ line: line.id, member })))
     .filter(({ member }) => member.status === 'red' || member.status === 'amber')
     .sort((a, b) => byWorst(a.member.status, b.member.status) || severity(b.member) - severity(a.member))
-  const heading: Content = { text: 'Flagged members and what makes them so', style: 'heading' }
+  const heading: Content = { text: 'Flagged members and what makes them so', style: 'heading', headlineLevel: 1 }
   if (rows.length === 0)
     return [heading, { text: 'No member has reached an amber or red trigger in this round.', style: 'body' }]
   const shown = rows.slice(0, SHOWN).map(({ line, member }): Content => {

@@ -8,11 +8,11 @@ import { severity } from './drawings.ts'
 
 export function ledgers(input: ReportInput): Content[] {
   return [
-    { text: 'Supports', style: 'heading', pageBreak: 'before' },
+    { text: 'Supports', style: 'heading', headlineLevel: 1, pageBreak: 'before' },
     supports(input),
-    { text: 'Spans', style: 'heading' },
+    { text: 'Spans', style: 'heading', headlineLevel: 1 },
     spans(input),
-    { text: 'Members', style: 'heading' },
+    { text: 'Members', style: 'heading', headlineLevel: 1 },
     members(input),
     {
       text: 'Moments at the from and to end induced by settlement alone, clockwise positive; existing moments from the loads as combined. Fraction: induced bending over capacity of its sense. Utilisation: induced and existing together over capacity, at its worst along the member.',

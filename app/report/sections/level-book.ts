@@ -9,7 +9,7 @@ export function levelBook({ building, round }: ReportInput): Content[] {
   if (!round.book) return []
   const view = bookView(building, round)
   return [
-    { text: 'Appendix: level book', style: 'heading', pageBreak: 'before' },
+    { text: 'Appendix: level book', style: 'heading', headlineLevel: 1, pageBreak: 'before' },
     {
       text: `Round ${round.id}, ${round.date}. Readings in m as booked; reduced level by height of collimation; adjusted level and its standard deviation from the least-squares adjustment.`,
       style: 'body',

@@ -28,7 +28,7 @@ export function measured(input: ReportInput): Content[] {
       estimated.map((s) => `${s.support}: ${s.estimated_from ?? 'from its neighbours'}`).join('; '),
     ])
   return [
-    { text: 'What was measured', style: 'heading', pageBreak: 'before' },
+    { text: 'What was measured', style: 'heading', headlineLevel: 1, pageBreak: 'before' },
     facts(rows),
     table(
       [
@@ -78,7 +78,7 @@ export function howSure(input: ReportInput): Content[] {
     `Every rotation, moment and fraction below carries the standard deviation that follows from the levels and their covariance. "±" is ${z.toFixed(2)} standard deviations (${percent} %). A value is clear when that interval lies on one side of every trigger, else borderline. The uncertainty of stiffness, loads and capacity is not in it.`,
   )
   return [
-    { text: 'How sure it is', style: 'heading' },
+    { text: 'How sure it is', style: 'heading', headlineLevel: 1 },
     ...paragraphs.map((text): Content => ({ text, style: 'body' })),
     ...misclosures(findings.levelling),
   ]

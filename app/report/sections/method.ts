@@ -23,14 +23,14 @@ export function method({ criteria, building }: ReportInput): Content[] {
   if (cracked.length)
     lines.push(`Reduced stiffness: ${cracked.map((s) => `${s.id} × ${s.stiffness_factor}`).join(', ')}.`)
   return [
-    { text: 'Method and assumptions', style: 'heading' },
+    { text: 'Method and assumptions', style: 'heading', headlineLevel: 1 },
     { ul: lines, style: 'body' },
   ]
 }
 
 export function limits({ criteria }: ReportInput): Content[] {
   return [
-    { text: 'Limits and their sources', style: 'heading' },
+    { text: 'Limits and their sources', style: 'heading', headlineLevel: 1 },
     table(
       [
         { heading: 'held against', width: 130 },
@@ -68,7 +68,7 @@ export function limits({ criteria }: ReportInput): Content[] {
 
 export function notCovered(): Content[] {
   return [
-    { text: 'What is not covered', style: 'heading' },
+    { text: 'What is not covered', style: 'heading', headlineLevel: 1 },
     {
       ul: [
         'Anything not described: members, walls, cladding, stairs, services, finishes, joints and their condition.',
@@ -116,7 +116,7 @@ export function signOff({ options }: ReportInput): Content[] {
     {
       unbreakable: true,
       stack: [
-        { text: 'Sign-off', style: 'heading' },
+        { text: 'Sign-off', style: 'heading', headlineLevel: 1 },
         {
           text: 'This report has no standing until a licensed engineer has reviewed the readings, the description of the frame, the capacities and the findings, has seen the building, and has signed below.',
           style: 'body',
@@ -131,7 +131,7 @@ export function signOff({ options }: ReportInput): Content[] {
 
 export function verification({ verification: rows }: ReportInput): Content[] {
   return [
-    { text: 'Appendix: verification', style: 'heading', pageBreak: 'before' },
+    { text: 'Appendix: verification', style: 'heading', headlineLevel: 1, pageBreak: 'before' },
     {
       text: `Before this report was made the program repeated ${rows.length} checks against published results and practice with the code that made the findings; ${rows.filter((r) => r.agrees).length} agree.`,
       style: 'body',

@@ -73,8 +73,11 @@ export function statusSentence(findings: RoundFindings): string {
   const borderline = [...members, ...spans].filter((x) => x.certainty === 'borderline').length
   const unassessed = members.filter((x) => x.status === 'none').length
   const parts = [counted('red'), counted('amber')]
-  let sentence = `${parts.join('; ')}. ${borderline} of these and the others ${borderline === 1 ? 'is' : 'are'} borderline: within the survey's uncertainty of a trigger.`
-  if (borderline === 0) sentence = `${parts.join('; ')}. None is borderline.`
+  let sentence = `${parts.join('; ')}. ${
+    borderline === 0
+      ? 'None is borderline.'
+      : `${borderline} of all members and spans ${borderline === 1 ? 'is' : 'are'} borderline: within the survey's uncertainty of a trigger.`
+  }`
   if (unassessed > 0)
     sentence += ` ${unassessed} ${unassessed === 1 ? 'member has' : 'members have'} no capacity given and ${unassessed === 1 ? 'is' : 'are'} not assessed.`
   return sentence

@@ -1,0 +1,12 @@
+import { defineConfig } from 'vitest/config'
+
+export default defineConfig({
+  test: {
+    root: new URL('../..', import.meta.url).pathname,
+    include: ['test/e2e/**/*.e2e.ts'],
+    testTimeout: 120_000,
+    hookTimeout: 120_000,
+    // One browser at a time: two cores, and pictures that are to be the same.
+    fileParallelism: false,
+  },
+})
