@@ -88,7 +88,7 @@ export class ProjectState {
   }
 
   async draft(round: Draft): Promise<void> {
-    this.#take(await call('rounds/draft', round))
+    this.#take(await call('rounds/draft', { ...round }))
   }
 
   async discard(round: string): Promise<void> {
