@@ -110,12 +110,17 @@ export class Desk {
       this.picked = [{ line: element.within, id: element.id }]
     }
     await tick()
-    const near = document.querySelector(`[data-missing~="${part}"]`)
-    const target = near?.matches('input, select, button, textarea')
-      ? near
-      : near?.querySelector('input:not(:disabled), select:not(:disabled), button:not(:disabled)')
-    ;(target as HTMLElement | null | undefined)?.focus()
+    controlNear(part)?.focus()
   }
+}
+
+/** The control that gives what is missing: of several places that say they do, the last one that is open to the keyboard. */
+function controlNear(part: MissingPart): HTMLElement | undefined {
+  const controls = 'input, select, button'
+  return [...document.querySelectorAll<HTMLElement>(`[data-missing~="${part}"]`)].toReversed().flatMap((place) => {
+    const inside = place.matches(controls) ? [place] : [...place.querySelectorAll<HTMLElement>(controls)]
+    return inside.find((control) => !control.matches(':disabled')) ?? []
+  })[0]
 }
 
 const KEY = Symbol('desk')

@@ -46,7 +46,7 @@ function closure({
 
 function openBook({ misclosures }: BookView): Said[] {
   if (misclosures.length > 0) return []
-  return [{ text: 'The book does not close on a benchmark yet: nothing checks it.', isDoubtful: true }]
+  return [{ text: 'The book does not close on a benchmark yet: nothing checks it.', isDoubtful: false }]
 }
 
 function arithmetic({ back_m, fore_m, gain_m, agrees }: NonNullable<BookView['checks']>): Said {
