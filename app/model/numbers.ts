@@ -73,6 +73,13 @@ export function moment(kNm: number): string {
   return fixed(Math.sign(kNm) * figures, decimals)
 }
 
+/** A moment with the half width of its interval, to the same place: `31.7 ± 3.1`; apart, so that both can be aligned. */
+export function momentWithInterval(kNm: number, half: number): [value: string, interval: string] {
+  const size = Math.max(Math.abs(kNm), 0)
+  const decimals = size >= 99.95 ? 0 : 1
+  return [fixed(kNm, decimals), fixed(half, decimals)]
+}
+
 /** A rotation or distortion in rad as 1/n, n to three figures; `none` below 1/100000. */
 export function ratio(rad: number): string {
   const size = Math.abs(rad)

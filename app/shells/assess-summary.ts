@@ -8,7 +8,7 @@ import type {
   Status,
 } from '../model/findings.ts'
 import { byWorst } from '../model/findings.ts'
-import { millimetres, moment, percent, ratio } from '../model/numbers.ts'
+import { millimetres, momentWithInterval, percent, ratio } from '../model/numbers.ts'
 
 /** Members and spans named for each round; the findings file has them all. */
 const NAMED = 8
@@ -73,7 +73,7 @@ function memberLine(line: FrameLineFinding, m: MemberFinding, z: number): string
     m.induced_fraction === undefined
       ? 'no capacity given'
       : `${percent(m.induced_fraction)} of capacity, utilisation ${m.utilisation === undefined ? '–' : percent(m.utilisation)}`
-  return `  ${MARK[m.status]} ${m.status.padEnd(6)} member ${m.member}, frame line ${line.id}: induced ${moment(Math.abs(value))} ± ${moment(z * sd)} kNm, ${held}; ${m.certainty}`
+  return `  ${MARK[m.status]} ${m.status.padEnd(6)} member ${m.member}, frame line ${line.id}: induced ${momentWithInterval(Math.abs(value), z * sd).join(' ± ')} kNm, ${held}; ${m.certainty}`
 }
 
 function spanLine(line: FrameLineFinding, s: SpanFinding, z: number): string {

@@ -11,7 +11,7 @@ import {
   type Status,
   type Triggered,
 } from '../../app/model/findings.ts'
-import { fixed, millimetres, moment, percent, ratio } from '../../app/model/numbers.ts'
+import { fixed, millimetres, momentWithInterval, percent, ratio } from '../../app/model/numbers.ts'
 
 export interface LedgerRow {
   target: Target
@@ -100,14 +100,16 @@ function memberRows(findings: RoundFindings, z: number): LedgerRow[] {
     .sort((a, b) => byWorst(a.member.status, b.member.status) || severity(b.member) - severity(a.member))
     .map(({ line, member }) => {
       const end = governingEnd(member)
+      const size = Math.abs(end === 'from' ? member.moment_from_kNm : member.moment_to_kNm)
+      const [value, interval] = momentWithInterval(size, z * (end === 'from' ? member.sd_from_kNm : member.sd_to_kNm))
       return {
         target: { kind: 'member', line, id: member.member },
         name: member.member,
         line,
         status: member.status,
         certainty: member.certainty,
-        value: moment(Math.abs(end === 'from' ? member.moment_from_kNm : member.moment_to_kNm)),
-        interval: moment(z * (end === 'from' ? member.sd_from_kNm : member.sd_to_kNm)),
+        value,
+        interval,
         share: member.induced_fraction === undefined ? '' : percent(member.induced_fraction),
         remark: member.status === 'none' ? 'no capacity' : member.certainty,
       }

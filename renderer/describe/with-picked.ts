@@ -1,6 +1,6 @@
 /** A scene with everything that is picked marked on it, as the one thing selected is. */
 import type { Point, Primitive, Scene, Target } from '../../app/drawing/scene.ts'
-import { sameThing } from '../state/selection.svelte.ts'
+import { sameThing } from '../assess/targets.ts'
 
 /** Radius of the mark on a support, drawing mm. */
 const MARK = 3

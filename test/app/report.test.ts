@@ -2,10 +2,11 @@ import { beforeAll, describe, expect, it } from 'vitest'
 import { assessBuilding } from '../../app/assess/assess.ts'
 import { runVerification } from '../../app/assess/verify.ts'
 import { CAUTION_LINE, CAUTIONS, RED_CAUTION } from '../../app/model/cautions.ts'
-import { moment, percent } from '../../app/model/numbers.ts'
+import { momentWithInterval, percent } from '../../app/model/numbers.ts'
 import { printer } from '../../app/report/print.ts'
 import { exampleBuilding } from '../../app/usecases/example-building.ts'
 import type { Printer } from '../../app/usecases/ports.ts'
+import { normalQuantile } from '../../solver/index.ts'
 import { pdfPages } from '../support/pdf-text.ts'
 
 const building = exampleBuilding()
@@ -20,6 +21,7 @@ const options: Parameters<Printer['print']>[1] = {
   date: '2026-11-20',
   verification: runVerification(),
 }
+const z = normalQuantile(0.975)
 const going = { aborted: false }
 
 function folded(text: string): string {
@@ -79,10 +81,10 @@ describe('the condition report of the example', () => {
     const negative = members.filter((m) => m.moment_from_kNm < -1)
     expect(negative.length).toBeGreaterThan(5)
     for (const member of members) {
-      expect(whole).toContain(moment(member.moment_from_kNm))
+      expect(whole).toContain(momentWithInterval(member.moment_from_kNm, z * member.sd_from_kNm).join(' ± '))
       if (member.induced_fraction !== undefined) expect(whole).toContain(percent(member.induced_fraction))
     }
-    expect(whole).toContain(`\u2212${moment(Math.abs(negative[0]!.moment_from_kNm))}`)
+    expect(whole).toContain(`\u2212${Math.abs(negative[0]!.moment_from_kNm).toFixed(1)}`)
   })
 
   it('never prints a status without its certainty', () => {

@@ -1,7 +1,7 @@
 /** The tables of supports, spans and members, worst first. */
 import type { Content, TableCell } from 'pdfmake/interfaces.js'
 import { byWorst, type MemberFinding, type SpanFinding } from '../../model/findings.ts'
-import { millimetres, moment, percent, ratio } from '../../model/numbers.ts'
+import { millimetres, moment, momentWithInterval, percent, ratio } from '../../model/numbers.ts'
 import type { ReportInput } from '../input.ts'
 import { statusCell, table } from '../style.ts'
 import { severity } from './drawings.ts'
@@ -15,7 +15,7 @@ export function ledgers(input: ReportInput): Content[] {
     { text: 'Members', style: 'heading', headlineLevel: 1 },
     members(input),
     {
-      text: 'Moments at the from and to end induced by settlement alone, clockwise positive; existing moments from the loads as combined. Fraction: induced bending over capacity of its sense. Utilisation: induced and existing together over capacity, at its worst along the member.',
+      text: 'Moments at the from and to end induced by settlement alone, clockwise positive; existing moments from the loads as combined. Fraction: induced bending over capacity of its sense. Used: utilisation, induced and existing together over capacity, at its worst along the member.',
       style: 'quiet',
     },
   ]
@@ -80,20 +80,20 @@ function members({ findings, z }: ReportInput): Content {
   const loaded = rows.some(({ member }) => member.existing_from_kNm !== undefined)
   return table(
     [
-      { heading: 'line', width: 30 },
+      { heading: 'line', width: 24 },
       { heading: 'member', width: '*' },
-      { heading: 'from, kNm', width: 68, align: 'right' },
-      { heading: 'to, kNm', width: 68, align: 'right' },
-      ...(loaded ? [{ heading: 'existing, kNm', width: 66, align: 'right' as const }] : []),
-      { heading: 'fraction', width: 58, align: 'right' },
-      { heading: 'utilisation', width: 45, align: 'right' },
+      { heading: 'from, kNm', width: 60, align: 'right' },
+      { heading: 'to, kNm', width: 60, align: 'right' },
+      ...(loaded ? [{ heading: 'existing, kNm', width: 62, align: 'right' as const }] : []),
+      { heading: 'fraction', width: 56, align: 'right' },
+      { heading: 'used', width: 32, align: 'right' },
       { heading: 'status', width: 84 },
     ],
     rows.map(({ line, member }): TableCell[] => [
       line,
       member.member,
-      `${moment(member.moment_from_kNm)} ± ${moment(z * member.sd_from_kNm)}`,
-      `${moment(member.moment_to_kNm)} ± ${moment(z * member.sd_to_kNm)}`,
+      momentWithInterval(member.moment_from_kNm, z * member.sd_from_kNm).join(' ± '),
+      momentWithInterval(member.moment_to_kNm, z * member.sd_to_kNm).join(' ± '),
       ...(loaded
         ? [
             member.existing_from_kNm === undefined
