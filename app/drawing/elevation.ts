@@ -4,14 +4,15 @@
  * as described.
  */
 import { intervalFactor } from '../assess/confidence.ts'
-import { criteriaOf, type Building, type Criteria, type FrameLine } from '../model/building.ts'
+import { criteriaOf, type Building, type FrameLine } from '../model/building.ts'
 import { Fault } from '../model/faults.ts'
-import { worse, type RoundFindings, type Status } from '../model/findings.ts'
+import { worse, type Certainty, type RoundFindings, type Status } from '../model/findings.ts'
 import { deformedLine, factorFor, largestFactor } from './elevation/deformed.ts'
 import { frameIn, roomBeside, weightOf, type DrawnFrame } from './elevation/frame.ts'
 import { depthOf, drawGround, levelMarks, LEVEL_WIDTH, OVERHANG } from './elevation/ground.ts'
 import { drawLabels, drawSectionNames, flaggedMembers, flagWords, isUsed } from './elevation/labels.ts'
 import {
+  borderlineEntry,
   deformedEntry,
   drawLegend,
   legendRows,
@@ -147,7 +148,7 @@ function dress(
   const mostFactor = largestFactor(frame, { x: EDGE, y: EDGE, width: width - 2 * EDGE, height: height - 2 * EDGE })
   const factor = Math.min(mostFactor, given ?? factorFor(nodes, frame.scale, room * 0.35))
   const moments = momentScale(frame, room)
-  const legend = legendRows(entriesOf(frame, criteriaOf(building), show, factor, moments), width - 2 * EDGE)
+  const legend = legendRows(entriesOf(frame, { building, findings }, show, factor, moments), width - 2 * EDGE)
   const supports = new Map(findings?.supports.map((s) => [s.support, s]))
   const floor = frame.box.y + frame.box.height
   const ground = Math.max(0, ...frame.bases.map((b) => b.at[1] + depthOf(b, frame.scale) - floor))
@@ -160,7 +161,7 @@ function dress(
   }
   add(settlementRow(frame, supports, z, top))
   add(dimensionRow(frame, top))
-  add(bubbleRow(frame, supports, z, top, selected))
+  add(bubbleRow(frame, supports, z, top, width, selected))
   add(distortionRow(frame, frame.finding?.spans ?? [], z, top, selected))
   const headroom = Math.max(HEADROOM, show.loads && isLoaded(frame) ? LOADS_HEADROOM : 0)
   return {
@@ -186,11 +187,12 @@ function titled(row: Row, x: number, top: number): Row {
 
 function entriesOf(
   frame: DrawnFrame,
-  criteria: Criteria,
+  { building, findings }: Pick<ElevationInput, 'building' | 'findings'>,
   show: ElevationLayers,
   factor: number,
   moments: MomentScale,
 ): Entry[] {
+  const criteria = criteriaOf(building)
   const { finding } = frame
   const entries: Entry[] = []
   if (finding && show.deformed) entries.push(deformedEntry(factor))
@@ -201,11 +203,20 @@ function entriesOf(
     const shown = new Set(held.map((x) => x.status))
     for (const status of ['red', 'amber', 'green', 'none'] as const)
       if (shown.has(status)) entries.push(statusEntry(status, status === 'none' ? 'no capacity given' : status))
+    const isBorderline =
+      finding.spans.some(borderline) || (show.labels && flaggedMembers(frame).some((m) => borderline(m.finding)))
+    if (isBorderline) entries.push(borderlineEntry())
     const figures = show.labels ? flaggedMembers(frame).map((m) => flagWords(m.finding, criteria)) : []
     if (figures.some((f) => f !== '' && !isUsed(f))) entries.push(wordsEntry('% of capacity, induced'))
     if (figures.some(isUsed)) entries.push(wordsEntry('% used: with the loads'))
   }
+  const estimated = new Set(findings?.supports.filter((s) => s.estimated).map((s) => s.support))
+  if (frame.bases.some((b) => estimated.has(b.support))) entries.push(wordsEntry('\u2248 estimated, not measured'))
   return entries
+}
+
+function borderline({ status, certainty }: { status: Status; certainty: Certainty }): boolean {
+  return certainty === 'borderline' && status !== 'none'
 }
 
 function titleOf({ line, findings }: ElevationInput, frame: FrameLine): string {

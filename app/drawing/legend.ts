@@ -1,7 +1,8 @@
 /** The legend along the top: each entry a sample and its words, set from the left until the line is full. */
+import { ring } from './bubble.ts'
 import type { Primitive, Role } from './scene.ts'
 import { baselineFor, corners, line, mark, polygon, text } from './shapes.ts'
-import { SMALL } from './sizes.ts'
+import { MARK, SMALL } from './sizes.ts'
 import { textWidth } from './text-width.ts'
 import type { Status } from '../model/findings.ts'
 
@@ -43,6 +44,11 @@ export function lineEntry(role: Role, words: string): Entry {
 
 export function statusEntry(status: Status, words: string): Entry {
   return { width: 2.4, words, draw: (x, y) => [mark(status, [x + 1.2, y], 2.4)] }
+}
+
+/** A ring round a mark, shown without saying which status. */
+export function borderlineEntry(): Entry {
+  return { width: 3.2, words: 'borderline', draw: (x, y) => [ring('grid', [x + 1.6, y], MARK * 0.64)] }
 }
 
 export function wordsEntry(words: string): Entry {

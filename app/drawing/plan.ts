@@ -6,7 +6,16 @@ import { intervalFactor } from '../assess/confidence.ts'
 import { criteriaOf, type Building } from '../model/building.ts'
 import type { RoundFindings } from '../model/findings.ts'
 import { bubbleFor } from './bubble.ts'
-import { drawLegend, legendRows, LEGEND_ROW, lineEntry, statusEntry, wordsEntry, type Entry } from './legend.ts'
+import {
+  borderlineEntry,
+  drawLegend,
+  legendRows,
+  LEGEND_ROW,
+  lineEntry,
+  statusEntry,
+  wordsEntry,
+  type Entry,
+} from './legend.ts'
 import { contourLabels, drawContours, planContours, type DrawnContours } from './plan/contour-lines.ts'
 import { drawSupports, planSupports, supportLabels, type PlanSupport } from './plan/discs.ts'
 import { planIn } from './plan/fit.ts'
@@ -46,14 +55,17 @@ export function plan(input: PlanInput): Scene {
 
   const top = EDGE + legend.length * LEGEND_ROW
   const within: Box = { x: EDGE, y: top, width: width - 2 * EDGE, height: height - top - EDGE - FOOTER }
-  const bubbles = lineBubbles(lines, fit, within, selected)
+  const dimensions = dimensionBoxes(show.dimensions, fit.box, awayRight)
+  const bubbles = lineBubbles(lines, fit, within, dimensions, selected)
   const segments = [...lines.map((l) => [l.from, l.to] as const), ...bubbles.leaders]
-  const boxes = [...bubbles.boxes, ...supports.map(discBox), ...dimensionBoxes(show.dimensions, fit.box, awayRight)]
+  const boxes = [...bubbles.boxes, ...supports.map(discBox), ...dimensions]
   const labels = supportLabels(supports, z, { within, boxes, segments })
-  const values = contour ? contourLabels(contour, { within, boxes: [...boxes, ...labels.boxes], segments }) : undefined
+  const values = contour
+    ? contourLabels(contour, { within, boxes: [...boxes, ...labels.boxes, ...supports.map(aroundDisc)], segments })
+    : undefined
 
   const foot = height - EDGE - FOOTER / 2
-  const bar = scaleBar(fit.scale, EDGE, foot + 1.5, Math.min(52, width * 0.28))
+  const bar = scaleBar(fit.scale, EDGE, foot + 1.5, Math.min(52, width * 0.26))
   const primitives: Primitive[] = [
     ...(contour ? drawContours(contour) : []),
     ...(values?.drawn ?? []),
@@ -65,7 +77,7 @@ export function plan(input: PlanInput): Scene {
     ...(show.dimensions ? gridDimensions(building, fit, awayRight) : []),
     ...bar,
     ...(findings
-      ? tiltArrow(findings.tilt, z, width - EDGE, foot)
+      ? tiltArrow(findings.tilt, z, width - EDGE, foot, width * 0.66)
       : benchmarkNote(building, width * 0.4, foot + 1.5, width * 0.6 - EDGE)),
     ...drawLegend(legend, EDGE, EDGE),
   ]
@@ -91,9 +103,17 @@ function entriesOf(supports: readonly PlanSupport[], lines: readonly PlanLine[],
   const shown = new Set(lines.filter((l) => l.assessed).map((l) => l.status))
   for (const status of ['red', 'amber', 'green', 'none'] as const)
     if (shown.has(status)) entries.push(statusEntry(status, status === 'none' ? 'no capacity given' : status))
+  if (lines.some((l) => l.assessed && l.certainty === 'borderline' && l.status !== 'none'))
+    entries.push(borderlineEntry())
   if (found.length === 0 && supports.some((s) => s.hasStud))
     entries.push({ width: 1, words: 'levelling stud', draw: (x, y) => [circle('stud', [x + 0.5, y], 0.5)] })
   return entries
+}
+
+/** A figure of a contour would be taken for the support's there. */
+function aroundDisc({ at: [x, y], radius }: PlanSupport): Box {
+  const r = radius + 3
+  return { x: x - r, y: y - r, width: 2 * r, height: 2 * r }
 }
 
 function discBox({ at: [x, y], radius }: PlanSupport): Box {

@@ -48,7 +48,7 @@ export const LIGHT: Inks = {
   paper: '#f6f4ee',
   ink: '#1e2730',
   quiet: '#59626b',
-  rule: '#8d8f8c',
+  rule: '#868885',
   faint: '#cfccc2',
   movement: '#0c7378',
   movementTint: '#cbe0dd',

@@ -2,9 +2,10 @@
 import type { Criteria } from '../../model/building.ts'
 import { byWorst, type MemberFinding } from '../../model/findings.ts'
 import { moment } from '../../model/numbers.ts'
+import { statusMark } from '../bubble.ts'
 import { placeLabels, type Box, type Wanted } from '../place-labels.ts'
 import type { Point, Primitive, Role } from '../scene.ts'
-import { baselineFor, between, mark, text, type Extra } from '../shapes.ts'
+import { baselineFor, between, circle, text, type Extra } from '../shapes.ts'
 import { MARK, SMALL, TEXT } from '../sizes.ts'
 import { CAP_HEIGHT, textWidth } from '../text-width.ts'
 import { pointOn, type Curve } from './deformed.ts'
@@ -32,8 +33,8 @@ export function drawLabels(
   within: Box,
 ): Primitive[] {
   const flagged = flaggedMembers(frame)
-  const marks = flagged.map(({ drawn, finding }) => markOf(frame, drawn, finding))
-  const taken = flagged.map(({ drawn }) => around(between(drawn.from, drawn.to, 0.5), MARK))
+  const marks = flagged.flatMap(({ drawn, finding }) => marksOf(frame, drawn, finding))
+  const taken = flagged.map(({ drawn }) => around(between(drawn.from, drawn.to, 0.5), MARK * 1.28))
   const segments = frame.members.map((m) => [m.from, m.to] as const)
   const wanted = [
     ...flagged.flatMap(({ drawn, finding }) => fractionLabel(frame, criteria, drawn, finding)),
@@ -98,9 +99,16 @@ function severity(m: MemberFinding): number {
   return Math.max(m.induced_fraction ?? 0, m.utilisation ?? 0)
 }
 
-function markOf(frame: DrawnFrame, { from, to, length, member }: DrawnMember, { status }: MemberFinding): Primitive {
+function marksOf(
+  frame: DrawnFrame,
+  { from, to, length, member }: DrawnMember,
+  { status, certainty }: MemberFinding,
+): Primitive[] {
   const size = Math.min(MARK, Math.max(1, length * 0.3))
-  return mark(status, between(from, to, 0.5), size, { target: memberTarget(frame.line.id, member.id) })
+  const at = between(from, to, 0.5)
+  const marks = statusMark(status, certainty, at, { target: memberTarget(frame.line.id, member.id) }, size)
+  // The line itself stays out of the ring.
+  return certainty === 'borderline' ? [circle('paper', at, size * 0.64), ...marks] : marks
 }
 
 const USED = 'used'
@@ -128,8 +136,8 @@ function fractionLabel(
   const words = flagWords(finding, criteria)
   const width = textWidth(words, TEXT, 'medium')
   const [x, y] = between(from, to, 0.5)
-  const up = TEXT * 0.36 + 2.3
-  const side = width / 2 + 2
+  const up = TEXT * 0.36 + 2.6
+  const side = width / 2 + 2.5
   const isFlat = Math.abs(to[0] - from[0]) >= Math.abs(to[1] - from[1])
   if (words === '' || (isFlat && width > length - 0.5)) return []
   const beside: Point[] = [

@@ -7,7 +7,7 @@ import { fixed, millimetres, ratio } from '../../model/numbers.ts'
 import { bubbleFor, BUBBLE, drawBubble, statusMark } from '../bubble.ts'
 import type { Point, Primitive, Target } from '../scene.ts'
 import { arrow, baselineFor, line, polygon, sameTarget, text, type Extra } from '../shapes.ts'
-import { MARK, SMALL, TEXT } from '../sizes.ts'
+import { EDGE, MARK, SMALL, TEXT } from '../sizes.ts'
 import { textWidth } from '../text-width.ts'
 import { leastBay, type DrawnFrame } from './frame.ts'
 
@@ -140,6 +140,7 @@ export function bubbleRow(
   found: ReadonlyMap<string, SupportFinding>,
   z: number,
   top: number,
+  width: number,
   selected?: Target,
 ): Row | undefined {
   if (frame.bases.length === 0) return undefined
@@ -151,7 +152,8 @@ export function bubbleRow(
     const finding = found.get(base.support)
     const label = finding ? settlementLabel(finding, z) : `Support ${base.support}`
     const target: Target = { kind: 'support', id: base.support }
-    const made = bubbleFor(base.support, Math.max(4.4, room))
+    const toEdge = 2 * (Math.min(base.at[0], width - base.at[0]) - EDGE)
+    const made = bubbleFor(base.support, Math.max(4.4, Math.min(room, toEdge)))
     return drawBubble(made, [base.at[0], y], { target, label }, sameTarget(selected, target))
   })
   return { drawn, height: 2 * BUBBLE + 1, middle: BUBBLE, title: '' }

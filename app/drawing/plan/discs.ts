@@ -78,11 +78,11 @@ interface Run {
   size: number
 }
 
-/** What may be missed of a way to label, so that it is still taken for the whole plan. */
-const MISSED = 0.12
+/** What share of the supports may miss a way to label, so that it is still taken for the plan. */
+const MISSED = 0.26
 
 /**
- * Name over value ± interval at a corner of the disc. Where that has no room all supports get the value alone: a
+ * Name over value ± interval at a corner of the disc. Where that has no room for most, all supports get less: a
  * figure must be told at once to be its support's own, which figures in many forms and places are not.
  */
 export function supportLabels(
@@ -90,27 +90,28 @@ export function supportLabels(
   z: number,
   obstacles: Obstacles,
 ): { drawn: Primitive[]; boxes: Box[] } {
-  const sorted = [...supports].sort((a, b) => severity(b) - severity(a))
-  const ways = [fullRows, valueRows, shortRows]
-  for (const rows of ways) {
-    const wanted = sorted.map((support) => {
+  const boxes: Box[] = []
+  const drawn: Primitive[] = []
+  let left = [...supports].sort((a, b) => severity(b) - severity(a))
+  for (const rows of [fullRows, valueRows, shortRows]) {
+    const wanted = left.map((support) => {
       const lines = rows(support, z)
       const width = Math.max(...lines.map((runs) => runsWidth(runs)))
       const height = (lines.length - 1) * TEXT * LEADING + TEXT * CAP_HEIGHT
       return { support, lines, width, height, places: cornersOf(support, width, height) }
     })
-    const placed = placeLabels(wanted, obstacles)
-    const missed = placed.filter((box) => box === undefined).length
-    if (missed > MISSED * supports.length && rows !== ways.at(-1)) continue
-    return {
-      boxes: placed.filter((box) => box !== undefined),
-      drawn: wanted.flatMap(({ support, lines }, i) => {
-        const box = placed[i]
-        return box ? rowsAt(lines, box, box.x + box.width / 2 < support.at[0], support.extra) : []
-      }),
-    }
+    const placed = placeLabels(wanted, { ...obstacles, boxes: [...(obstacles.boxes ?? []), ...boxes] })
+    const missed = wanted.filter((_, i) => !placed[i]).map((w) => w.support)
+    if (rows !== shortRows && missed.length > Math.max(1, MISSED * supports.length)) continue
+    wanted.forEach(({ support, lines }, i) => {
+      const box = placed[i]
+      if (!box) return
+      boxes.push(box)
+      drawn.push(...rowsAt(lines, box, box.x + box.width / 2 < support.at[0], support.extra))
+    })
+    left = missed
   }
-  return { drawn: [], boxes: [] }
+  return { drawn, boxes }
 }
 
 function fullRows({ id, finding }: PlanSupport, z: number): Run[][] {

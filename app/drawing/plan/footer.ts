@@ -29,11 +29,12 @@ export function scaleBar(scale: number, x: number, y: number, most: number): Pri
 }
 
 /** An arrow that points to where the building goes down, with slope and direction in words. */
-export function tiltArrow(tilt: Tilt, z: number, right: number, y: number): Primitive[] {
+export function tiltArrow(tilt: Tilt, z: number, right: number, y: number, width: number): Primitive[] {
   const size = Math.hypot(tilt.x_rad, tilt.y_rad)
-  const words = tiltWords(tilt, z)
+  const [full, short] = tiltWords(tilt, z)
+  const words = textWidth(full, TEXT) <= width - 13 ? full : short
   const centre: [number, number] = [right - 6, y]
-  const label = `Tilt of the whole: ${words}`
+  const label = `Movement of the whole: ${full}`
   const shapes: Primitive[] = [text('text', [right - 13, baselineFor(y, TEXT)], words, TEXT, 'end', { label })]
   if (!isTilted(tilt, z)) return [...shapes, circle('tilt', centre, 0.5, { label })]
   const [ux, uy] = [tilt.x_rad / size, -tilt.y_rad / size]
@@ -47,9 +48,12 @@ export function tiltArrow(tilt: Tilt, z: number, right: number, y: number): Prim
   return shapes
 }
 
-export function tiltWords(tilt: Tilt, z: number): string {
-  if (!isTilted(tilt, z)) return 'no tilt beyond the measuring noise'
-  return `tilt ${ratio(Math.hypot(tilt.x_rad, tilt.y_rad))}, down towards ${bearing(tilt)}\u00b0 from +y`
+/** Slope and direction, at full length and for a narrow sheet. */
+export function tiltWords(tilt: Tilt, z: number): [full: string, short: string] {
+  if (!isTilted(tilt, z)) return ['no tilt beyond the measuring noise', 'no tilt measured']
+  const slope = `tilt ${ratio(Math.hypot(tilt.x_rad, tilt.y_rad))}`
+  const direction = `${bearing(tilt)}\u00b0`
+  return [`${slope}, down towards ${direction} from +y`, `${slope}, ${direction}`]
 }
 
 /** Degrees clockwise from the y axis of the plan, 0 to 359. */

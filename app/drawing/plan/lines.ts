@@ -94,12 +94,18 @@ export interface PlacedBubbles {
 }
 
 /** Bubbles in line at the left and at the top of an orthogonal plan; beyond the line's end otherwise. */
-export function lineBubbles(lines: readonly PlanLine[], fit: PlanFit, within: Box, selected?: Target): PlacedBubbles {
+export function lineBubbles(
+  lines: readonly PlanLine[],
+  fit: PlanFit,
+  within: Box,
+  taken: readonly Box[],
+  selected?: Target,
+): PlacedBubbles {
   const wanted = lines.map((l) => {
     const bubble = bubbleFor(l.id, LONGEST_BUBBLE)
     return { l, bubble, ...wantedPlaces(l, bubble, fit.box) }
   })
-  const boxes = placeLabels(wanted, { within, boxes: fit.supports.map((s) => around(s.at, 3)) }, 0.8)
+  const boxes = placeLabels(wanted, { within, boxes: [...taken, ...fit.supports.map((s) => around(s.at, 3))] }, 0.8)
   const drawn: Primitive[] = []
   const leaders: (readonly [Point, Point])[] = []
   wanted.forEach(({ l, bubble, start }, i) => {
