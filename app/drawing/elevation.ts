@@ -101,12 +101,12 @@ export function elevation(input: ElevationInput): ElevationScene {
   const figures = !show.labels
     ? []
     : findings
-      ? drawLabels(frame, criteriaOf(building), diagrams, deformed.curves, within)
+      ? drawLabels(frame, criteriaOf(building), diagrams, deformed.curves, within, loads.boxes)
       : drawSectionNames(frame, within, loads.boxes)
   const primitives: Primitive[] = [
     ...drawSelection(frame, selected),
     ...ground.drawn,
-    ...drawMoments(found.id, diagrams, weightOf(frame)),
+    ...drawMoments(found.id, diagrams, weightOf(frame), z),
     ...loads.drawn,
     ...drawMembers(frame, z),
     ...drawPins(frame),

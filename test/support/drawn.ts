@@ -244,6 +244,13 @@ export const madeDrawing = fc
     for (const line of made.frame_lines) {
       line.members = line.members.filter((m) => m.kind === 'column' || chance() > 0.15)
       for (const m of line.members) if (m.kind === 'beam' && chance() < 0.1) m.pin_to = true
+      for (const m of line.members)
+        if (m.kind === 'beam' && chance() < 0.7)
+          m.loads = [
+            { kind: 'uniform', kN_per_m: 18.5, action: 'permanent' },
+            { kind: 'uniform', kN_per_m: 6, action: 'variable' },
+            { kind: 'point', kN: 30, at_m: 1, action: 'variable' },
+          ]
     }
     const building = rename === '' ? made : renamed(made, rename)
     return { building, line: building.frame_lines[0]!.id, width: sheet[0], height: sheet[1] }

@@ -31,6 +31,7 @@ export function drawLabels(
   diagrams: readonly MomentDiagram[],
   curves: readonly Curve[],
   within: Box,
+  loads: readonly Box[],
 ): Primitive[] {
   const flagged = flaggedMembers(frame)
   const marks = flagged.flatMap(({ drawn, finding }) => marksOf(frame, drawn, finding))
@@ -42,7 +43,7 @@ export function drawLabels(
   ]
   const places = placeLabels(wanted, {
     within,
-    boxes: taken,
+    boxes: [...taken, ...loads],
     segments,
     soft: [...curves.flatMap(segmentsOf), ...diagrams.flatMap(outlineOf)],
   })

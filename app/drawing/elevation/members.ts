@@ -56,7 +56,7 @@ export function wholePercent(fraction: number): string {
   return `${Math.round(fraction * 100)} %`
 }
 
-function memberLabel({ member }: DrawnMember, finding: MemberFinding | undefined, z: number): string {
+export function memberLabel({ member }: DrawnMember, finding: MemberFinding | undefined, z: number): string {
   if (!finding) return `${kindWord(member.kind)} ${member.id}, ${member.section}`
   function at(value: number, sd: number) {
     return `${moment(value)} \u00b1 ${moment(z * sd)}`

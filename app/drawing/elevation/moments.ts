@@ -7,6 +7,7 @@ import { niceBelow } from '../nice.ts'
 import type { Point, Primitive, Target } from '../scene.ts'
 import { line, polygon } from '../shapes.ts'
 import type { DrawnFrame, DrawnMember } from './frame.ts'
+import { memberLabel } from './members.ts'
 
 /** mm between hatching lines */
 const HATCH = 2.4
@@ -62,14 +63,19 @@ export function momentDiagrams(frame: DrawnFrame, { mmPerKNm }: MomentScale): Mo
 }
 
 /** Fill, hatching and outline; all fills come first so that no outline is covered. */
-export function drawMoments(lineId: string, diagrams: readonly MomentDiagram[], weight: number): Primitive[] {
+export function drawMoments(
+  lineId: string,
+  diagrams: readonly MomentDiagram[],
+  weight: number,
+  z: number,
+): Primitive[] {
   const shapes = diagrams.map((d) => ({
-    d,
     points: [d.drawn.from, d.fromTip, d.toTip, d.drawn.to],
     target: { kind: 'member', line: lineId, id: d.drawn.member.id } satisfies Target,
+    label: memberLabel(d.drawn, d.finding, z),
   }))
   return [
-    ...shapes.map(({ points, target }) => polygon('moment-fill', points, { target })),
+    ...shapes.map(({ points, target, label }) => polygon('moment-fill', points, { target, label })),
     ...diagrams.flatMap(hatching),
     ...shapes.map(({ points, target }): Primitive => ({
       shape: 'polyline',
