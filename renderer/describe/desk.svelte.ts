@@ -30,6 +30,8 @@ export class Desk {
   readonly #building: () => Building
   readonly #send: (edit: Edit) => Promise<void>
   readonly #selection: SelectionState
+  /** The edit under way: the next is made from the building as that one leaves it. */
+  #making: Promise<void> = Promise.resolve()
 
   constructor(building: () => Building, selection: SelectionState, send: (edit: Edit) => Promise<void>) {
     this.#building = building
@@ -96,9 +98,15 @@ export class Desk {
   }
 
   /** Makes an edit and sends it. Throws the faults that stand in its way; the building is then as it was. */
-  async make(edit: (building: Building) => Edit): Promise<void> {
-    const made = edit(this.building)
-    if (made.changes.length > 0) await this.#send(made)
+  make(edit: (building: Building) => Edit): Promise<void> {
+    const made = this.#making
+      .catch(() => undefined) // whoever made that edit has been told
+      .then(async () => {
+        const { what, changes } = edit(this.building)
+        if (changes.length > 0) await this.#send({ what, changes })
+      })
+    this.#making = made
+    return made
   }
 
   /** Opens the place where a missing thing is given, and puts the keyboard there. */
