@@ -32,14 +32,33 @@ function truth(value: boolean | undefined): number | null {
   return value === undefined ? null : Number(value)
 }
 
-export const supportOf = (row: Row): Support => entity(row)
-export const sectionOf = (row: Row): Section => entity(row, { json: ['capacity'] })
-export const nodeOf = (row: Row): FrameNode => entity(row, { json: ['base', 'load_kN'] })
-export const memberOf = (row: Row): Member =>
-  entity(row, { json: ['loads', 'capacity'], truth: ['pin_from', 'pin_to'] })
-export const bookRowOf = (row: Row): BookRow => entity(row)
-export const givenLevelOf = (row: Row): GivenLevel => entity(row)
-export const pointOf = (row: Row): SurveyPoint => entity(row)
+export function supportOf(row: Row): Support {
+  return entity(row)
+}
+
+export function sectionOf(row: Row): Section {
+  return entity(row, { json: ['capacity'] })
+}
+
+export function nodeOf(row: Row): FrameNode {
+  return entity(row, { json: ['base', 'load_kN'] })
+}
+
+export function memberOf(row: Row): Member {
+  return entity(row, { json: ['loads', 'capacity'], truth: ['pin_from', 'pin_to'] })
+}
+
+export function bookRowOf(row: Row): BookRow {
+  return entity(row)
+}
+
+export function givenLevelOf(row: Row): GivenLevel {
+  return entity(row)
+}
+
+export function pointOf(row: Row): SurveyPoint {
+  return entity(row)
+}
 
 export function supportRow(s: Support): Row {
   return { id: s.id, x_m: s.x_m, y_m: s.y_m, base_m: s.base_m ?? null }

@@ -100,10 +100,12 @@ export function readStore(db: ReadDb, path: string, readOnly: boolean): OwnReadS
       frame_lines: (statement.lines.all() as { id: string }[]).map(lineOf),
       survey: {
         points: statement.points.all().map((r) => pointOf(r as Row)),
-        ...(baseline == null ? {} : { baseline }),
+        ...(baseline === null || baseline === undefined ? {} : { baseline }),
         rounds,
       },
-      ...(criteria == null ? {} : { criteria: JSON.parse(criteria) as Building['criteria'] & object }),
+      ...(criteria === null || criteria === undefined
+        ? {}
+        : { criteria: JSON.parse(criteria) as Building['criteria'] & object }),
     }
   }
 

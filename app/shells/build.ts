@@ -13,7 +13,9 @@ import { isStale, rootFrom, sourceStamp, stampFile, type Part } from './freshnes
 
 const root = rootFrom(import.meta.url)
 const dist = join(root, 'dist')
-const shell = (name: string): string => join(root, 'app', 'shells', `${name}.ts`)
+function shell(name: string): string {
+  return join(root, 'app', 'shells', `${name}.ts`)
+}
 
 /** Loaded from node_modules when they are needed and not before: the database for projects, pdfmake for reports. */
 const EXTERNAL = ['better-sqlite3', 'pdfmake', 'electron', 'esbuild', 'vite']
