@@ -41,10 +41,7 @@ export function reportDocument(input: ReportInput, laidOut: (pages: number) => v
       ],
     },
     // A heading never stands alone at the foot of a page.
-    pageBreakBefore: (node, nodes) =>
-      node.headlineLevel === 1 &&
-      nodes.getFollowingNodesOnPage().length === 0 &&
-      node.startPosition.verticalRatio > 0.5,
+    pageBreakBefore: (node, nodes) => node.headlineLevel === 1 && nodes.getFollowingNodesOnPage().length === 0,
     footer: (page, pages) => {
       laidOut(pages)
       return {

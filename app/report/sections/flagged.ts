@@ -7,7 +7,7 @@ import type { ReportInput } from '../input.ts'
 import { statusCell, table } from '../style.ts'
 import { severity } from './drawings.ts'
 
-const SHOWN = 20
+const SHOWN = 12
 
 export function flagged(input: ReportInput): Content[] {
   const { findings, prepared } = input
@@ -18,14 +18,17 @@ export function flagged(input: ReportInput): Content[] {
   const heading: Content = { text: 'Flagged members and what makes them so', style: 'heading', headlineLevel: 1 }
   if (rows.length === 0)
     return [heading, { text: 'No member has reached an amber or red trigger in this round.', style: 'body' }]
-  const shown = rows.slice(0, SHOWN).map(({ line, member }): Content => {
+  const shown = rows.slice(0, SHOWN).map(({ line, member }, i): Content => {
     const target: BecauseTarget = { kind: 'member', line, id: member.member, end: member.fraction_end }
     const reason = because(prepared, findings, target)
-    const drivers = [...reason.shares].sort((a, b) => Math.abs(b.share) - Math.abs(a.share)).slice(0, 6)
+    const ranked = [...reason.shares].sort((a, b) => Math.abs(b.share) - Math.abs(a.share))
+    const drivers = ranked.filter((d, i) => i < 6 && Math.abs(d.share) >= 0.01 * Math.abs(ranked[0]!.share))
     return {
       unbreakable: true,
       margin: [0, 0, 0, 8],
       stack: [
+        // With the first of them, so that it never stands alone.
+        ...(i === 0 ? [heading] : []),
         {
           columns: [
             { width: '*', text: `${member.member} on frame line ${line}`, style: 'subheading' },
@@ -47,5 +50,5 @@ export function flagged(input: ReportInput): Content[] {
   })
   const left = rows.length - shown.length
   if (left > 0) shown.push({ text: `${left} further flagged members are in the table of members.`, style: 'quiet' })
-  return [heading, ...shown]
+  return shown
 }

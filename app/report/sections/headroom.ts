@@ -9,7 +9,12 @@ import { table } from '../style.ts'
 export function headroom({ prepared, findings, z }: ReportInput): Content[] {
   const rows = headroomOf(prepared, findings)
   const isHeld = rows.some((row) => row.amber || row.red)
-  const heading: Content = { text: 'What each support has left', style: 'heading', headlineLevel: 1 }
+  const heading: Content = {
+    text: 'What each support has left',
+    style: 'heading',
+    headlineLevel: 1,
+    pageBreak: 'before',
+  }
   if (!isHeld)
     return [heading, { text: `No support reaches a trigger within ${MOST} m of further settlement.`, style: 'body' }]
   return [

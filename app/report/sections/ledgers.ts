@@ -8,7 +8,7 @@ import { severity } from './drawings.ts'
 
 export function ledgers(input: ReportInput): Content[] {
   return [
-    { text: 'Supports', style: 'heading', headlineLevel: 1, pageBreak: 'before' },
+    { text: 'Supports', style: 'heading', headlineLevel: 1 },
     supports(input),
     { text: 'Spans', style: 'heading', headlineLevel: 1 },
     spans(input),

@@ -1,8 +1,8 @@
 /** Method and assumptions, limits with their sources, what is not covered, sign-off and verification. */
-import type { Content } from 'pdfmake/interfaces.js'
+import type { Content, TableCell } from 'pdfmake/interfaces.js'
 import { percent, ratio } from '../../model/numbers.ts'
 import type { ReportInput } from '../input.ts'
-import { table } from '../style.ts'
+import { QUIET, table } from '../style.ts'
 
 export function method({ criteria, building }: ReportInput): Content[] {
   const { combination } = criteria
@@ -30,38 +30,43 @@ export function method({ criteria, building }: ReportInput): Content[] {
 
 export function limits({ criteria }: ReportInput): Content[] {
   return [
-    { text: 'Limits and their sources', style: 'heading', headlineLevel: 1 },
-    table(
-      [
-        { heading: 'held against', width: 130 },
-        { heading: 'amber', width: 60, align: 'right' },
-        { heading: 'red', width: 60, align: 'right' },
-        { heading: 'source', width: '*' },
-      ],
-      [
-        [
-          'induced moment over capacity',
-          percent(criteria.induced_fraction.amber),
-          percent(criteria.induced_fraction.red),
-          'the assessor’s choice; common practice in monitoring plans',
-        ],
-        [
-          'utilisation, induced and existing',
-          percent(criteria.utilisation.amber),
-          percent(criteria.utilisation.red),
-          'red: the capacity given; amber: common practice',
-        ],
-        [
-          'angular distortion',
-          ratio(criteria.angular_distortion.amber),
-          ratio(criteria.angular_distortion.red),
-          '1/500 recommended limit and 1/150 structural damage of frames: Skempton and MacDonald, Proc. ICE 5 (III), 1956, 727–768; Bjerrum, Proc. European Conf. SMFE, Wiesbaden, 1963, vol. 2, 135–137; EN 1997-1:2004 Annex H',
-        ],
-      ],
-    ),
     {
-      text: 'EN 1997-1 Annex H gives its values for sagging and asks for half of them where the edge settles more (hogging). Finishes, plant and services may need stricter limits than the frame.',
-      style: 'body',
+      unbreakable: true,
+      stack: [
+        { text: 'Limits and their sources', style: 'heading', headlineLevel: 1 },
+        table(
+          [
+            { heading: 'held against', width: 130 },
+            { heading: 'amber', width: 60, align: 'right' },
+            { heading: 'red', width: 60, align: 'right' },
+            { heading: 'source', width: '*' },
+          ],
+          [
+            [
+              'induced moment over capacity',
+              percent(criteria.induced_fraction.amber),
+              percent(criteria.induced_fraction.red),
+              'the assessor’s choice; common practice in monitoring plans',
+            ],
+            [
+              'utilisation, induced and existing',
+              percent(criteria.utilisation.amber),
+              percent(criteria.utilisation.red),
+              'red: the capacity given; amber: common practice',
+            ],
+            [
+              'angular distortion',
+              ratio(criteria.angular_distortion.amber),
+              ratio(criteria.angular_distortion.red),
+              '1/500 recommended limit and 1/150 structural damage of frames: Skempton and MacDonald, Proc. ICE 5 (III), 1956, 727–768; Bjerrum, Proc. European Conf. SMFE, Wiesbaden, 1963, vol. 2, 135–137; EN 1997-1:2004 Annex H',
+            ],
+          ],
+        ),
+        {
+          text: 'EN 1997-1 Annex H gives its values for sagging and asks for half of them where the edge settles more (hogging). Finishes, plant and services may need stricter limits than the frame.',
+          style: 'body',
+        },
+      ],
     },
   ]
 }
@@ -138,23 +143,26 @@ export function verification({ verification: rows }: ReportInput): Content[] {
     },
     table(
       [
-        { heading: 'source', width: 150 },
-        { heading: 'check', width: '*' },
-        { heading: 'expected', width: 62, align: 'right' },
-        { heading: 'found', width: 62, align: 'right' },
-        { heading: 'unit', width: 34 },
+        { heading: 'check, and where the expected value stands', width: '*' },
+        { heading: 'expected', width: 58, align: 'right' },
+        { heading: 'found', width: 58, align: 'right' },
+        { heading: 'unit', width: 42 },
         { heading: 'agrees', width: 34 },
       ],
-      rows.map((r) => [
-        r.source,
-        r.check,
+      rows.map((r): TableCell[] => [
+        { stack: [{ text: r.check }, { text: r.source, color: QUIET, fontSize: 7.5 }] },
         significant(r.expected),
-        significant(r.found),
+        found(r),
         r.unit,
         r.agrees ? 'yes' : 'NO',
       ]),
     ),
   ]
+}
+
+/** What is nothing but the rounding of the arithmetic is printed as nothing. */
+function found({ expected, found: value, tolerance }: ReportInput['verification'][number]): string {
+  return expected === 0 && Math.abs(value) <= tolerance ? '0' : significant(value)
 }
 
 function significant(value: number): string {
