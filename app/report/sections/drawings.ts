@@ -26,7 +26,7 @@ export function drawings(input: ReportInput): Content[] {
       line: line.id,
       findings,
       width,
-      height: width * 0.6,
+      height: width * heightFor(building, line.id),
       show: { deformed: true, moments: true },
     })
     shown.push({
@@ -47,6 +47,14 @@ export function drawings(input: ReportInput): Content[] {
     style: 'quiet',
   })
   return shown
+}
+
+/** Height of the sheet over its width: two to a page for the usual frame, more for a tower, at most a page. */
+function heightFor(building: ReportInput['building'], id: string): number {
+  const nodes = building.frame_lines.find((line) => line.id === id)?.nodes ?? []
+  const [x, z] = [nodes.map((n) => n.x_m), nodes.map((n) => n.z_m)]
+  const slenderness = (Math.max(...z) - Math.min(...z)) / Math.max(1, Math.max(...x) - Math.min(...x))
+  return Math.min(1.3, Math.max(0.6, 0.35 + 0.6 * slenderness))
 }
 
 /** Frame lines, the one with the worst flag and the greatest fraction first. */
