@@ -45,5 +45,5 @@ function memberLine({ line, member }: { line: string; member: MemberFinding }): 
 }
 
 function spanLine({ line, span }: { line: string; span: SpanFinding }): string {
-  return `Greatest angular distortion from ${span.from} to ${span.to} of line ${line}: ${ratio(span.angular_distortion_rad)}, ${span.certainty}.`
+  return `Greatest angular distortion from ${span.from} to ${span.to} of line ${line}: ${ratio(Math.abs(span.angular_distortion_rad))}, ${span.certainty}.`
 }
