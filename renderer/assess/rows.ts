@@ -1,6 +1,7 @@
 /** Rows of the ledger, worst first, as they are shown: text apart from layout. */
 import { headroomOf } from '../../app/assess/headroom.ts'
 import type { Prepared } from '../../app/assess/prepare.ts'
+import type { Rate, Series } from '../../app/assess/series.ts'
 import type { Target } from '../../app/drawing/scene.ts'
 import {
   byWorst,
@@ -35,6 +36,7 @@ export interface LedgerColumns {
 }
 
 export type LedgerTab = 'members' | 'spans' | 'supports' | 'headroom'
+export type LedgerPage = LedgerTab | 'trend'
 
 export const COLUMNS: Record<LedgerTab, LedgerColumns> = {
   supports: { name: 'support', value: 'settlement mm', share: '', remark: '' },
@@ -136,4 +138,17 @@ function left(reach: Reach | undefined): string {
 
 function nameOf(target: Triggered): string {
   return target.kind === 'member' ? target.id : `${target.from}\u2013${target.to}`
+}
+
+/** Days in a month, on average. */
+const MONTH = 30.44
+
+/** A rate by the month, with its interval, in the words of its quantity. */
+export function rateText(quantity: Series['quantity'], { perDay, sdPerDay }: Rate, z: number): string {
+  const [rate, half] = [perDay * MONTH, z * sdPerDay * MONTH]
+  if (quantity === 'settlement') return `${fixed(rate, 2)} \u00b1 ${fixed(half, 2)} mm a month`
+  if (quantity === 'angular distortion')
+    return `${fixed(rate * 1000, 3)} \u00b1 ${fixed(half * 1000, 3)} \u2030 a month`
+  if (quantity === 'end moment') return `${fixed(rate, 1)} \u00b1 ${fixed(half, 1)} kNm a month`
+  return `${fixed(rate * 100, 1)} \u00b1 ${fixed(half * 100, 1)} % of capacity a month`
 }

@@ -6,7 +6,7 @@ import { assessRound } from '../../app/assess/assess.ts'
 import { prepare, type Prepared } from '../../app/assess/prepare.ts'
 import type { Building } from '../../app/model/building.ts'
 import { faultsOf, type FaultRecord } from '../../app/model/faults.ts'
-import type { RoundFindings, Status } from '../../app/model/findings.ts'
+import type { RoundFindings } from '../../app/model/findings.ts'
 import { call } from '../client.svelte.ts'
 import type { Visit } from '../strip/places.ts'
 import { contextOf } from './context.ts'
@@ -19,7 +19,8 @@ export class VisitState {
   #chosen = $state<string | null>(null)
   /** Gives the round as it is being typed; Log sets it. */
   typing: () => Draft | null = () => null
-  #statuses = $state.raw<ReadonlyMap<string, Status>>(new Map())
+  #rounds = $state.raw<readonly RoundFindings[]>([])
+  readonly #statuses = $derived(new Map(this.#rounds.map((r) => [r.id, r.status])))
   #before: Prepared | undefined
 
   constructor(project: ProjectState) {
@@ -97,17 +98,25 @@ export class VisitState {
     return this.round !== null && this.round === this.#project.view?.building.survey.baseline
   }
 
-  /** The worst flag of every accepted round, from the core, which keeps what it has found once. */
+  /** Findings of all accepted rounds by date, with what is being typed in place of its own. */
+  readonly all = $derived.by((): readonly RoundFindings[] => {
+    const now = this.findings
+    if (!now) return this.#rounds
+    const others = this.#rounds.filter((r) => r.id !== now.id)
+    return [...others, now].sort((a, b) => (a.date < b.date ? -1 : a.date > b.date ? 1 : 0))
+  })
+
+  /** The findings of every accepted round, from the core, which keeps what it has found once. */
   async refreshStatuses(): Promise<void> {
     const building = this.#project.view?.building
     if (!building) return
     try {
       const { rounds } = await call('assess/findings', {})
-      if (this.#project.view?.building === building) this.#statuses = new Map(rounds.map((r) => [r.id, r.status]))
+      if (this.#project.view?.building === building) this.#rounds = rounds
     } catch (error) {
       // A building that cannot be assessed yet has no flags; the place Assess says why.
       if (!faultsOf(error)) throw error
-      this.#statuses = new Map()
+      this.#rounds = []
     }
   }
 }
