@@ -9,6 +9,8 @@ import { normalQuantile, type BookReading } from '../../solver/index.ts'
 import { adjustReadings, type AdjustedReadings } from './adjusted-readings.ts'
 import { allowedMisclosure, DEFAULT_ALLOWANCE, type Allowance } from './allowances.ts'
 import { benchmarkChecks } from './benchmarks.ts'
+import { blunderCauses } from './blunder-causes.ts'
+import { collimationHint, collimationOf, confusedHints, exchangedHints, type CollimationView } from './book-hints.ts'
 import { CONTROLLED_FROM, levellingOf, levelRound, numberBook, SUSPECT_AT, type NumberedBook } from './levels.ts'
 import { levelled, type Prepared } from './prepare.ts'
 import { sdOf } from './line-movement.ts'
@@ -78,6 +80,10 @@ export interface BookView {
   suspects: SuspectReading[]
   uncontrolled_rows: number[]
   benchmarks: BenchmarkCheck[]
+  /** What the book looks like where something is wrong with it, a sentence each. */
+  hints: string[]
+  /** Absent where the sights tell nothing of it. */
+  collimation?: CollimationView
   /** Every stud of the building: its level, its movement, or that it is not read yet. */
   studs: StudMovement[]
   /** Round that `since_previous_mm` counts from. */
@@ -111,6 +117,7 @@ export function bookView(building: Building, round: Round, options: BookViewOpti
   )
   const movement = new Map(studs.map((s) => [s.point, s]))
   const total = lengthOf(reduced.readings)
+  const collimation = adjusted && collimationOf(numbered, adjusted.variance)
   const allowance = options.allowance ?? (total === undefined ? DEFAULT_ALLOWANCE.setup : DEFAULT_ALLOWANCE.km)
   return {
     rows: book.rows.map((row, i) => rowView(row, i, numbered, adjusted, levels, movement.get(row.point))),
@@ -120,13 +127,43 @@ export function bookView(building: Building, round: Round, options: BookViewOpti
     misclosures: misclosuresOf(numbered, adjusted, z, allowance),
     allowance,
     ...(tests ? testsOf(tests.levelling) : {}),
-    suspects: tests?.levelling.suspects ?? [],
+    suspects: tests && adjusted ? withCauses(tests.levelling.suspects ?? [], book, adjusted) : [],
     uncontrolled_rows: tests?.levelling.uncontrolled_rows ?? [],
     benchmarks: adjusted ? benchmarkChecks(numbered, adjusted, tests!.scale, z) : [],
+    hints: [
+      ...(adjusted ? exchangedHints(numbered, HINT_SDS * largestSd(numbered, adjusted)) : []),
+      ...confusedHints(studs),
+      ...collimationHint(collimation),
+    ],
+    ...(collimation ? { collimation } : {}),
     studs,
     ...(previous === undefined ? {} : { previous }),
     problems,
   }
+}
+
+/** How many standard deviations of the book a slip's size may be away from what it is taken for. */
+const HINT_SDS = 4
+
+/** The standard deviation of the longest closure: how well the book knows where it should be, m. */
+function largestSd({ reduced }: NumberedBook, { variance }: AdjustedReadings): number {
+  const sums = reduced.closures.map((c) => c.readings.reduce((sum, i) => sum + variance[i]!, 0))
+  return Math.sqrt(Math.max(0, ...sums))
+}
+
+function withCauses(
+  suspects: readonly SuspectReading[],
+  { rows }: LevelBook,
+  { variance }: AdjustedReadings,
+): SuspectReading[] {
+  const tolerance = HINT_SDS * Math.sqrt(Math.max(0, ...variance))
+  return suspects.map((suspect) => {
+    const row = rows[suspect.row - 1]
+    const reading = row && { back: row.back_m, mid: row.mid_m, fore: row.fore_m }[suspect.sight]
+    if (reading === undefined) return suspect
+    const causes = blunderCauses(reading, suspect.error_mm / 1000, tolerance)
+    return causes.length ? { ...suspect, causes } : suspect
+  })
 }
 
 function rowPlace(round: Round, row: number, point: string): FaultRecord['place'] {

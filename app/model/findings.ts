@@ -114,6 +114,8 @@ export interface SuspectReading {
   standardised_residual: number
   /** Estimated size of the error, reading minus what the rest of the book says. */
   error_mm: number
+  /** Slips that would make just this reading off by just this much. */
+  causes?: string[]
 }
 
 /** A benchmark freed and found again from the others. */

@@ -12,6 +12,8 @@ export function closingWords(page: BookView): Said[] {
   return [
     ...page.misclosures.map(closure),
     ...openBook(page),
+    ...suspects(page),
+    ...page.hints.map((text) => ({ text, isDoubtful: true })),
     arithmetic(page.checks),
     ...benchmarks(page),
     ...loose(page),
@@ -47,6 +49,13 @@ function closure({
 function openBook({ misclosures }: BookView): Said[] {
   if (misclosures.length > 0) return []
   return [{ text: 'The book does not close on a benchmark yet: nothing checks it.', isDoubtful: false }]
+}
+
+function suspects({ suspects: readings }: BookView): Said[] {
+  return readings.slice(0, 3).map(({ row, point, sight, error_mm, causes }) => ({
+    text: `Row ${row}, ${sight}sight on ${point}: off by about ${fixed(error_mm, 1)} mm${causes?.length ? `; it looks as if ${causes.join(', or ')}` : ''}.`,
+    isDoubtful: true,
+  }))
 }
 
 function arithmetic({ back_m, fore_m, gain_m, agrees }: NonNullable<BookView['checks']>): Said {

@@ -1,5 +1,6 @@
 /** What was measured in this round, and how sure it is. */
 import type { Content } from 'pdfmake/interfaces.js'
+import { bookView } from '../../assess/level-book.ts'
 import { level, millimetres } from '../../model/numbers.ts'
 import type { Levelling } from '../../model/findings.ts'
 import type { ReportInput } from '../input.ts'
@@ -67,6 +68,7 @@ export function howSure(input: ReportInput): Content[] {
     )
   }
   paragraphs.push(...levellingSentences(findings.levelling, percent))
+  if (input.round.book) paragraphs.push(...bookView(building, input.round).hints)
   paragraphs.push(
     benchmarks === 1
       ? 'One benchmark was held. Its stability is assumed: a movement of the benchmark would look like an equal and opposite movement of the whole building.'
