@@ -28,12 +28,15 @@ export function exchangedHints({ ids, reduced }: NumberedBook, tolerance: number
 export function confusedHints(studs: readonly StudMovement[]): string[] {
   const strange = studs.filter((s) => Math.abs(s.since_previous_mm ?? 0) > STRANGE_MM)
   return strange.flatMap((stud) => {
-    const like = studs.filter((other) => {
-      if (other === stud || other.level_m === undefined || other.since_previous_mm === undefined) return false
-      const before = other.level_m + other.since_previous_mm / 1000
-      return Math.abs(stud.level_m! - before) * 1000 <= LIKE_MM
-    })
-    return like.map((other) => `${stud.point} reads as ${other.point} did at the last visit: is it the wrong point?`)
+    const like = studs
+      .flatMap((other) => {
+        if (other === stud || other.level_m === undefined || other.since_previous_mm === undefined) return []
+        const before = other.level_m + other.since_previous_mm / 1000
+        return [{ other, away_mm: Math.abs(stud.level_m! - before) * 1000 }]
+      })
+      .sort((x, y) => x.away_mm - y.away_mm)[0]
+    if (!like || like.away_mm > LIKE_MM) return []
+    return [`${stud.point} reads as ${like.other.point} did at the last visit: is it the wrong point?`]
   })
 }
 

@@ -70,7 +70,7 @@ describe('the page of a level book with a slip in it', () => {
       const [a, b] = ['S-B2', 'S-B4'].map((id) => rows.find((r) => r.point === id)!)
       ;[a!.point, b!.point] = [b!.point, a!.point]
     })
-    expect(page.hints.join(' ')).toMatch(/S-B2 reads as S-B4 did.*S-B4 reads as S-B2 did/)
+    expect(page.hints.join(' ')).toMatch(/S-B4 reads as S-\w\d did at the last visit/)
   })
 
   it('estimates a collimation error where back and fore sights are unequal', () => {
