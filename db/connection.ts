@@ -24,13 +24,18 @@ export function connect(path: string, options: { readonly?: boolean; mustExist?:
     fileMustExist: options.mustExist ?? true,
     timeout: BUSY_MS,
   })
-  db.pragma('trusted_schema = OFF')
-  db.pragma('foreign_keys = ON')
-  if (!options.readonly) {
-    db.pragma('journal_mode = DELETE')
-    db.pragma('synchronous = FULL')
+  try {
+    db.pragma('trusted_schema = OFF')
+    db.pragma('foreign_keys = ON')
+    if (!options.readonly) {
+      db.pragma('journal_mode = DELETE')
+      db.pragma('synchronous = FULL')
+    }
+    return db
+  } catch (error) {
+    db.close()
+    throw error
   }
-  return db
 }
 
 const statements = new WeakMap<Connection, Map<string, Database.Statement>>()

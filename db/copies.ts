@@ -3,13 +3,14 @@
  * after it. A copy is an ordinary project file named by its time, so that restoring one is opening it. Kept: the
  * three latest of the latest day, the latest of each other day, ten in all; those made before a schema change stay.
  */
-import { existsSync, mkdirSync, readdirSync, rmSync } from 'node:fs'
+import { existsSync, mkdirSync, readdirSync, renameSync, rmSync } from 'node:fs'
 import { basename, dirname, join } from 'node:path'
 import type { Connection } from './connection.ts'
 
 const OF_THE_DAY = 3
 const IN_ALL = 10
-const NAME = /^(\d{4}-\d{2}-\d{2}) \d{6}\.levelstead$/
+const NAME = /^\d{4}-\d{2}-\d{2} \d{6}( before \d{4})?\.levelstead$/
+const OF_A_STEP = / before \d{4}\.levelstead$/
 
 export function copiesFolder(path: string): string {
   return join(dirname(path), `${basename(path, '.levelstead')}.copies`)
@@ -27,19 +28,17 @@ export function copiesOf(path: string): string[] {
 
 /** Copies the project unless one of that day is there. `now` is ISO 8601. Gives the copy's name, or null. */
 export function copyOfTheDay(db: Connection, path: string, now: string): string | null {
-  const day = now.slice(0, 10)
-  if (copiesOf(path).some((name) => name.startsWith(day))) return null
-  const name = `${day} ${now.slice(11, 19).replaceAll(':', '')}.levelstead`
-  copyTo(db, join(makeFolder(path), name))
-  const kept = keptCopies(copiesOf(path))
-  for (const copy of copiesOf(path)) if (!kept.has(copy)) rmSync(join(copiesFolder(path), copy), { force: true })
+  if (copiesOf(path).some((name) => name.startsWith(now.slice(0, 10)))) return null
+  const name = copyNamed(db, path, `${timeName(now)}.levelstead`)
+  const ofDays = copiesOf(path).filter((copy) => !OF_A_STEP.test(copy))
+  const kept = keptCopies(ofDays)
+  for (const copy of ofDays) if (!kept.has(copy)) rmSync(join(copiesFolder(path), copy), { force: true })
   return name
 }
 
-/** Copies the project as it is before its schema changes. */
-export function copyBeforeStep(db: Connection, path: string, step: number): void {
-  const target = join(makeFolder(path), `before-${String(step).padStart(4, '0')}.levelstead`)
-  if (!existsSync(target)) copyTo(db, target)
+/** Copies the project as it is before the schema step of that number. Gives the copy's name. */
+export function copyBeforeStep(db: Connection, path: string, now: string, step: number): string {
+  return copyNamed(db, path, `${timeName(now)} before ${String(step).padStart(4, '0')}.levelstead`)
 }
 
 /** Which of the copies stay, of names by time, latest first. */
@@ -55,12 +54,26 @@ export function keptCopies(latestFirst: readonly string[]): Set<string> {
   return new Set(kept.slice(0, IN_ALL))
 }
 
-function makeFolder(path: string): string {
-  const folder = copiesFolder(path)
-  mkdirSync(folder, { recursive: true })
-  return folder
+function timeName(now: string): string {
+  return `${now.slice(0, 10)} ${now.slice(11, 19).replaceAll(':', '')}`
 }
 
+function copyNamed(db: Connection, path: string, name: string): string {
+  const folder = copiesFolder(path)
+  mkdirSync(folder, { recursive: true })
+  copyTo(db, join(folder, name))
+  return name
+}
+
+/** A copy has its name only once it is whole: one cut short would keep the day's real one from being made. */
 export function copyTo(db: Connection, target: string): void {
-  db.prepare('VACUUM INTO ?').run(target)
+  const beside = `${target}.part`
+  rmSync(beside, { force: true })
+  try {
+    db.prepare('VACUUM INTO ?').run(beside)
+    renameSync(beside, target)
+  } catch (error) {
+    rmSync(beside, { force: true })
+    throw error
+  }
 }

@@ -1,13 +1,17 @@
 /** The steps of the schema, by number; a file is brought up to date in one transaction or not at all. */
 import { APPLICATION_ID, type Connection } from './connection.ts'
 import { up as first } from './migrations/0010-first.ts'
+import { up as replace } from './migrations/0020-replace.ts'
 
 export interface Step {
   number: number
   up(db: Connection): void
 }
 
-export const STEPS: readonly Step[] = [{ number: 10, up: first }]
+export const STEPS: readonly Step[] = [
+  { number: 10, up: first },
+  { number: 20, up: replace },
+]
 
 /** The schema that this version writes. */
 export const LATEST = STEPS.at(-1)!.number
@@ -18,19 +22,18 @@ export function schemaOf(db: Connection): number {
 
 /** Brings a file from the schema it has to the latest; nothing is changed where a step fails. */
 export function migrate(db: Connection, steps: readonly Step[] = STEPS): void {
-  const from = schemaOf(db)
-  const wanted = steps.filter((step) => step.number > from)
-  if (wanted.length === 0) return
   db.exec('BEGIN IMMEDIATE')
   try {
-    for (const step of wanted) step.up(db)
+    // Asked inside: another program may have brought the file up to date while this one waited for it.
+    const from = schemaOf(db)
+    for (const step of steps) if (step.number > from) step.up(db)
     db.pragma(`application_id = ${APPLICATION_ID}`)
-    db.pragma(`user_version = ${wanted.at(-1)!.number}`)
+    db.pragma(`user_version = ${Math.max(from, steps.at(-1)!.number)}`)
     const open = db.pragma('foreign_key_check') as unknown[]
     if (open.length) throw new Error(`${open.length} references are open after the migration`)
     db.exec('COMMIT')
   } catch (error) {
-    db.exec('ROLLBACK')
+    if (db.inTransaction) db.exec('ROLLBACK')
     throw error
   }
 }

@@ -3,48 +3,27 @@
  * whole; what is opened is looked at before anything is written to it, and a file of a newer version, of another
  * program or with damage is left as it is.
  */
-import {
-  accessSync,
-  closeSync,
-  constants,
-  existsSync,
-  lstatSync,
-  openSync,
-  readSync,
-  renameSync,
-  rmSync,
-  statSync,
-} from 'node:fs'
+import { accessSync, constants, lstatSync, renameSync, rmSync, statSync } from 'node:fs'
 import { basename, dirname, join, resolve } from 'node:path'
 import type { Building } from '../app/model/building.ts'
 import { Fault } from '../app/model/faults.ts'
-import type { DraftRound, OpenProject, Projects, WriteStore } from '../app/usecases/ports.ts'
-import { APPLICATION_ID, connect, type Connection, type ReadDb, type WriteDb } from './connection.ts'
-import { copiesFolder, copiesOf, copyBeforeStep, copyOfTheDay, copyTo } from './copies.ts'
+import type { DraftRound, OpenProject, Projects } from '../app/usecases/ports.ts'
+import { connect, type Connection, type ReadDb, type WriteDb } from './connection.ts'
+import { copyBeforeStep, copyOfTheDay, copyTo } from './copies.ts'
+import { damageOf, isWritable, refuseForeign, refuseHeadless, refuseUnsound } from './inspect.ts'
 import { LATEST, migrate, schemaOf } from './migrate.ts'
 import { onFile } from './sqlite-faults.ts'
 import { readStore } from './store.ts'
 import { fill, writeStore } from './write.ts'
 
-const HEAD = 'SQLite format 3\0'
-
 export function projects(now: () => string = () => new Date().toISOString()): Projects {
   return {
     create(path, building, rounds, who, when) {
-      refuseTarget(path)
       madeWhole(path, (beside) => create(beside, building, rounds, who, when))
     },
     open: (path) => open(resolve(path), now()),
     duplicate(from, path) {
-      refuseTarget(path)
-      madeWhole(path, (beside) => {
-        const db = connect(from.path, { readonly: true })
-        try {
-          copyTo(db, beside)
-        } finally {
-          db.close()
-        }
-      })
+      madeWhole(path, (beside) => duplicate(from.path, beside))
     },
   }
 }
@@ -59,56 +38,87 @@ function create(path: string, building: Building, rounds: readonly DraftRound[],
   }
 }
 
+function duplicate(from: string, path: string): void {
+  const db = connect(from, { readonly: true })
+  try {
+    copyTo(db, path)
+  } finally {
+    db.close()
+  }
+}
+
 /** Makes a file beside its target and renames it, so that no half a project ever stands under the name. */
 function madeWhole(path: string, make: (beside: string) => void): void {
-  const beside = join(dirname(resolve(path)), `.${basename(path)}.${process.pid}.part`)
-  try {
-    onFile(path, () => make(beside))
-    renameSync(beside, path)
-  } catch (error) {
-    rmSync(beside, { force: true })
-    rmSync(`${beside}-journal`, { force: true })
-    throw error
-  }
+  onFile(path, 'writing', () => {
+    refuseTarget(path)
+    const beside = join(dirname(resolve(path)), `.${basename(path)}.${process.pid}.part`)
+    try {
+      rmSync(beside, { force: true })
+      make(beside)
+      renameSync(beside, path)
+    } catch (error) {
+      rmSync(beside, { force: true })
+      rmSync(`${beside}-journal`, { force: true })
+      throw error
+    }
+  })
 }
 
 function refuseTarget(path: string): void {
   const folder = dirname(resolve(path))
   if (!statSync(folder, { throwIfNoEntry: false })?.isDirectory()) throw new Fault('folder.missing', { file: path })
   if (lstatSync(path, { throwIfNoEntry: false })) throw new Fault('file.exists', { file: path })
-  try {
-    accessSync(folder, constants.W_OK)
-  } catch (error) {
-    throw new Fault(
-      'file.unwritable',
-      { file: path, detail: { reason: 'the folder cannot be written to' } },
-      { cause: error },
-    )
-  }
+  accessSync(folder, constants.W_OK)
 }
 
 function open(path: string, now: string): OpenProject {
-  refuseForeign(path)
-  return onFile(path, () => {
-    const db = connect(path, { readonly: !isWritable(path) })
+  return onFile(path, 'reading', () => {
+    refuseForeign(path)
+    const db = connectSound(path)
     try {
-      inspect(db, path)
-      if (!db.readonly) {
-        if (schemaOf(db) < LATEST) copyBeforeStep(db, path, LATEST)
-        migrate(db)
-        copyQuietly(db, path, now)
-      } else if (schemaOf(db) < LATEST) throw new Fault('file.unwritable', { file: path })
+      if (db.readonly) refuseOlder(db, path)
+      else bringUpToDate(db, path, now)
+      refuseHeadless(db, path)
+      if (!db.readonly) copyQuietly(db, path, now)
       return opened(db, path)
     } catch (error) {
       db.close()
-      throw error
+      throw damageOf(error, path)
     }
+  })
+}
+
+/** Connects to a file that is looked at first. */
+function connectSound(path: string): Connection {
+  let db: Connection | undefined
+  try {
+    db = connect(path, { readonly: !isWritable(path) })
+    refuseUnsound(db, path)
+    return db
+  } catch (error) {
+    db?.close()
+    throw damageOf(error, path)
+  }
+}
+
+function refuseOlder(db: Connection, path: string): void {
+  if (schemaOf(db) === LATEST) return
+  const reason = 'it is of an older version and would have to be brought up to date'
+  throw new Fault('file.unwritable', { file: path, detail: { reason } })
+}
+
+/** An older file keeps a copy of itself as it was. */
+function bringUpToDate(db: Connection, path: string, now: string): void {
+  if (schemaOf(db) === LATEST) return
+  onFile(path, 'writing', () => {
+    copyBeforeStep(db, path, now, LATEST)
+    migrate(db)
   })
 }
 
 function opened(db: Connection, path: string): OpenProject {
   const read = readStore(db as ReadDb, path, db.readonly)
-  const store: WriteStore = writeStore(db as WriteDb, read)
+  const store = writeStore(db as WriteDb, read)
   return {
     path,
     read,
@@ -116,7 +126,7 @@ function opened(db: Connection, path: string): OpenProject {
       if (db.readonly)
         throw new Fault('file.unwritable', { file: path, detail: { reason: 'it is open for reading only' } })
       try {
-        return onFile(path, () => db.transaction(() => run(store)).immediate())
+        return onFile(path, 'writing', () => db.transaction(() => run(store)).immediate())
       } catch (error) {
         read.forget()
         throw error
@@ -126,63 +136,10 @@ function opened(db: Connection, path: string): OpenProject {
   }
 }
 
-/** What the first bytes tell, before SQLite is asked. */
-function refuseForeign(path: string): void {
-  const stat = statSync(path, { throwIfNoEntry: false })
-  if (!stat) throw new Fault('file.missing', { file: path })
-  if (stat.isDirectory()) throw new Fault('file.folder', { file: path })
-  if (stat.size === 0) throw new Fault('file.empty', { file: path })
-  const bytes = Buffer.alloc(100)
-  let handle: number
-  try {
-    handle = openSync(path, 'r')
-  } catch (error) {
-    throw new Fault(
-      'file.unreadable',
-      { file: path, detail: { reason: (error as NodeJS.ErrnoException).code ?? '' } },
-      { cause: error },
-    )
-  }
-  try {
-    readSync(handle, bytes, 0, bytes.length, 0)
-  } finally {
-    closeSync(handle)
-  }
-  const text = bytes.toString('latin1')
-  if (!text.startsWith(HEAD)) {
-    const isBuilding = /^[\s\u00ef\u00bb\u00bf]*\{/.test(text)
-    throw new Fault('project.foreign', { file: path, detail: isBuilding ? { isBuilding: 'yes' } : {} })
-  }
-  if (bytes.readUInt32BE(68) !== APPLICATION_ID) throw new Fault('project.foreign', { file: path })
-}
-
-function inspect(db: Connection, path: string): void {
-  const schema = schemaOf(db)
-  if (schema > LATEST) throw new Fault('project.newer', { file: path, value: schema, detail: { known: LATEST } })
-  const check = db.pragma('quick_check(1)', { simple: true })
-  if (check !== 'ok') throw damaged(path, String(check))
-}
-
-function damaged(path: string, reason: string): Fault {
-  const detail: Record<string, string> = { reason }
-  if (copiesOf(path).length) detail.copies = copiesFolder(path)
-  return new Fault('project.damaged', { file: path, detail })
-}
-
-function isWritable(path: string): boolean {
-  try {
-    accessSync(path, constants.W_OK)
-    return existsSync(dirname(path))
-  } catch {
-    // Read-only media and files that others own are opened for reading.
-    return false
-  }
-}
-
 /** A project of today has nothing yet that a copy would save. */
 function isOfToday(db: Connection, now: string): boolean {
-  const { created_at } = db.prepare('SELECT created_at FROM project').get() as { created_at: string }
-  return created_at.slice(0, 10) === now.slice(0, 10)
+  const created = db.prepare('SELECT created_at FROM project').pluck().get() as string
+  return created.slice(0, 10) === now.slice(0, 10)
 }
 
 /** A copy that cannot be made (a full disk, a folder that is not ours) must not keep anybody from their project. */

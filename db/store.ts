@@ -5,6 +5,7 @@ import type { Findings } from '../app/model/findings.ts'
 import type { ReadStore } from '../app/usecases/ports.ts'
 import type { Statement } from 'better-sqlite3'
 import type { ReadDb } from './connection.ts'
+import { onFile } from './sqlite-faults.ts'
 import { COLUMNS, bookRowOf, givenLevelOf, memberOf, nodeOf, pointOf, sectionOf, supportOf, type Row } from './rows.ts'
 
 const SQL = {
@@ -120,7 +121,7 @@ export function readStore(db: ReadDb, path: string, readOnly: boolean): OwnReadS
     return { ...roundOf(row), state: row.state, version: row.version, ...told }
   }
 
-  return {
+  return heldToFile({
     path,
     readOnly,
     revision,
@@ -142,5 +143,14 @@ export function readStore(db: ReadDb, path: string, readOnly: boolean): OwnReadS
       const row = statement.kept.get(hash) as { findings: string } | undefined
       return row && (JSON.parse(row.findings) as Findings)
     },
-  }
+  })
+}
+
+/** Reads whose refusals by SQLite (another program's lock, a disk that is gone) are faults of the file. */
+function heldToFile(store: OwnReadStore): OwnReadStore {
+  const held = Object.entries(store).map(([name, read]: [string, unknown]) => {
+    if (typeof read !== 'function') return [name, read]
+    return [name, (...given: unknown[]): unknown => onFile(store.path, 'reading', () => read(...given) as unknown)]
+  })
+  return Object.fromEntries(held) as OwnReadStore
 }
