@@ -15,14 +15,20 @@ export type WriteDb = ReadDb & { readonly [writes]: true }
 /** "LvSt", the project file's own mark in its header. */
 export const APPLICATION_ID = 0x4c765374
 
-/** How long to wait for another program to let go of the file, ms. */
-const BUSY_MS = 2000
+/** How long to wait for another program to let go of the file. */
+export const PATIENCE_MS = 2000
 
-export function connect(path: string, options: { readonly?: boolean; mustExist?: boolean } = {}): Connection {
+export interface ConnectOptions {
+  readonly?: boolean
+  mustExist?: boolean
+  patience_ms?: number
+}
+
+export function connect(path: string, options: ConnectOptions = {}): Connection {
   const db = new Database(path, {
     readonly: options.readonly ?? false,
     fileMustExist: options.mustExist ?? true,
-    timeout: BUSY_MS,
+    timeout: options.patience_ms ?? PATIENCE_MS,
   })
   try {
     db.pragma('trusted_schema = OFF')

@@ -8,7 +8,7 @@ import { basename, dirname, join, resolve } from 'node:path'
 import type { Building } from '../app/model/building.ts'
 import { Fault } from '../app/model/faults.ts'
 import type { DraftRound, OpenProject, Projects } from '../app/usecases/ports.ts'
-import { connect, type Connection, type ReadDb, type WriteDb } from './connection.ts'
+import { connect, PATIENCE_MS, type Connection, type ReadDb, type WriteDb } from './connection.ts'
 import { copyBeforeStep, copyOfTheDay, copyTo } from './copies.ts'
 import { damageOf, isWritable, refuseForeign, refuseHeadless, refuseUnsound } from './inspect.ts'
 import { LATEST, migrate, schemaOf } from './migrate.ts'
@@ -16,12 +16,15 @@ import { onFile } from './sqlite-faults.ts'
 import { readStore } from './store.ts'
 import { fill, writeStore } from './write.ts'
 
-export function projects(now: () => string = () => new Date().toISOString()): Projects {
+export function projects(
+  now: () => string = () => new Date().toISOString(),
+  patience_ms: number = PATIENCE_MS,
+): Projects {
   return {
     create(path, building, rounds, who, when) {
       madeWhole(path, (beside) => create(beside, building, rounds, who, when))
     },
-    open: (path) => open(resolve(path), now()),
+    open: (path) => open(resolve(path), now(), patience_ms),
     duplicate(from, path) {
       madeWhole(path, (beside) => duplicate(from.path, beside))
     },
@@ -71,10 +74,10 @@ function refuseTarget(path: string): void {
   accessSync(folder, constants.W_OK)
 }
 
-function open(path: string, now: string): OpenProject {
+function open(path: string, now: string, patience_ms: number): OpenProject {
   return onFile(path, 'reading', () => {
     refuseForeign(path)
-    const db = connectSound(path)
+    const db = connectSound(path, patience_ms)
     try {
       if (db.readonly) refuseOlder(db, path)
       else bringUpToDate(db, path, now)
@@ -89,10 +92,10 @@ function open(path: string, now: string): OpenProject {
 }
 
 /** Connects to a file that is looked at first. */
-function connectSound(path: string): Connection {
+function connectSound(path: string, patience_ms: number): Connection {
   let db: Connection | undefined
   try {
-    db = connect(path, { readonly: !isWritable(path) })
+    db = connect(path, { readonly: !isWritable(path), patience_ms })
     refuseUnsound(db, path)
     return db
   } catch (error) {

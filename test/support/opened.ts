@@ -34,8 +34,8 @@ export function madeProject(building: Building = smallBuilding(), when = WHEN): 
 }
 
 /** A project, open until the test ends. */
-export function opened(path: string, now = WHEN): OpenProject {
-  const project = projects(() => now).open(path)
+export function opened(path: string, now = WHEN, patience_ms?: number): OpenProject {
+  const project = projects(() => now, patience_ms).open(path)
   onTestFinished(() => project.close())
   return project
 }
