@@ -10,6 +10,7 @@ import type { Connection } from './connection.ts'
 const OF_THE_DAY = 3
 const IN_ALL = 10
 const NAME = /^\d{4}-\d{2}-\d{2} \d{6}( before \d{4})?\.levelstead$/
+const PART = '.part'
 const OF_A_STEP = / before \d{4}\.levelstead$/
 
 export function copiesFolder(path: string): string {
@@ -61,14 +62,15 @@ function timeName(now: string): string {
 function copyNamed(db: Connection, path: string, name: string): string {
   const folder = copiesFolder(path)
   mkdirSync(folder, { recursive: true })
+  // What a program that was killed had begun.
+  for (const begun of readdirSync(folder)) if (begun.endsWith(PART)) rmSync(join(folder, begun), { force: true })
   copyTo(db, join(folder, name))
   return name
 }
 
 /** A copy has its name only once it is whole: one cut short would keep the day's real one from being made. */
 export function copyTo(db: Connection, target: string): void {
-  const beside = `${target}.part`
-  rmSync(beside, { force: true })
+  const beside = `${target}${PART}`
   try {
     db.prepare('VACUUM INTO ?').run(beside)
     renameSync(beside, target)
