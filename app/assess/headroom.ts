@@ -21,6 +21,10 @@ const NOTHING = new Float64Array(0)
 interface Effect {
   target: Triggered
   at: (x: number) => number
+  /** at(0), known from the findings. */
+  now: number
+  /** No faster than this does it grow, 1/m: tells without a search which effects cannot be first. */
+  steepest: number
   sd: number
   amber: number
   red: number
@@ -46,13 +50,19 @@ export function headroomOf(prepared: Prepared, round: string | RoundFindings): S
 
 function firstOf(effects: readonly Effect[], trigger: 'amber' | 'red'): Reach | undefined {
   let best: { x: number; effect: Effect } | undefined
-  for (const effect of effects) {
+  function soonest(effect: Effect): number {
+    return effect.now >= effect[trigger] ? Infinity : (effect[trigger] - effect.now) / effect.steepest
+  }
+  function consider(effect: Effect): void {
     const limit = effect[trigger]
-    if (effect.at(0) >= limit) continue
-    if (best && effect.at(best.x) < limit) continue
+    if (soonest(effect) > (best?.x ?? MOST) || (best && effect.at(best.x) < limit)) return
     const x = firstReach(effect.at, limit, FIRST, MOST)
     if (x !== Infinity && (!best || x < best.x)) best = { x, effect }
   }
+  // The likeliest first: after it most others are told at a glance to come later.
+  const likeliest = effects.reduce<Effect | undefined>((a, b) => (!a || soonest(b) < soonest(a) ? b : a), undefined)
+  if (likeliest) consider(likeliest)
+  effects.forEach(consider)
   if (!best) return undefined
   const { x, effect } = best
   const step = x / 1000
@@ -78,6 +88,8 @@ function effectsOf(
       found.push({
         target: { kind: 'span', line: id, from: span.from, to: span.to },
         at: (x) => Math.abs(span.angular_distortion_rad + slope * x),
+        now: Math.abs(span.angular_distortion_rad),
+        steepest: Math.abs(slope),
         sd: span.sd_rad,
         ...prepared.criteria.angular_distortion,
       })
@@ -94,6 +106,8 @@ function effectsOf(
         found.push({
           target,
           at: (x) => fractionAt(prepared, shifted(x), l, i),
+          now: member.induced_fraction,
+          steepest: bendingGrowth(prepared, slopes, l, i),
           sd: member.sd_induced_fraction ?? 0,
           ...prepared.criteria.induced_fraction,
         })
@@ -101,12 +115,35 @@ function effectsOf(
         found.push({
           target,
           at: (x) => utilisation(prepared, shifted(x), l, i)!.utilisation,
+          now: member.utilisation,
+          steepest: utilisationGrowth(prepared, slopes, l, i),
           sd: member.sd_utilisation ?? 0,
           ...prepared.criteria.utilisation,
         })
     })
     return found
   })
+}
+
+/** The most that the fraction of a member's capacity grows by, 1/m. */
+function bendingGrowth(prepared: Prepared, slopes: readonly Slopes[], line: number, member: number): number {
+  const { sagging, hogging } = prepared.lines[line]!.capacities[member]!
+  const least = Math.min(sagging ?? Infinity, hogging ?? Infinity)
+  const most = Math.max(Math.abs(slopes[line]!.from[member]!), Math.abs(slopes[line]!.to[member]!))
+  return most === 0 ? 0 : most / least
+}
+
+/** The most that its utilisation grows by: of the bending in all its lines, or of the shear. */
+function utilisationGrowth(prepared: Prepared, slopes: readonly Slopes[], line: number, member: number): number {
+  const { partners, capacities, solved } = prepared.lines[line]!
+  const bending = partners[member]!.reduce(
+    (sum, p) => sum + bendingGrowth(prepared, slopes, p.line, p.member),
+    bendingGrowth(prepared, slopes, line, member),
+  )
+  const { shear } = capacities[member]!
+  const change = Math.abs(slopes[line]!.from[member]! + slopes[line]!.to[member]!) / solved!.length[member]!
+  const shearing = shear === undefined || change === 0 ? 0 : change / shear
+  return prepared.criteria.combination.settlement * Math.max(bending, shearing)
 }
 
 function fractionAt(prepared: Prepared, moments: EndMoments, line: number, member: number): number {
