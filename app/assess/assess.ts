@@ -13,7 +13,7 @@ import {
   type Status,
   type SupportFinding,
 } from '../model/findings.ts'
-import { lineMovement, sdOf, spanFindings, weigh, type LineMovement } from './line-movement.ts'
+import { lineMovement, sdOf, spanFindings, stretchFindings, weigh, type LineMovement } from './line-movement.ts'
 import type { LevelledRound } from './levels.ts'
 import { lineMoments, memberFindings, respondedValue, type LineMoments } from './members.ts'
 import { levelled, prepare, type Prepared } from './prepare.ts'
@@ -58,6 +58,7 @@ export function assessRound(prepared: Prepared, roundId: string): RoundFindings 
     id: movement.prepared.line.id,
     tilt_rad: movement.tilt.value,
     spans: spanFindings(prepared, movement, settlements),
+    stretches: stretchFindings(prepared, movement, settlements),
     members: memberFindings(prepared, moments, i, isEstimated),
     reactions: reactionsOf(prepared, movement),
     nodes: nodesOf(prepared, movement),

@@ -4,8 +4,8 @@
  * nothing, so only the rest (settlement less mean less tilt) is put on the frame: no digits are lost and a building that
  * only tilts has no moments, exactly.
  */
-import type { Certainty, SpanFinding } from '../model/findings.ts'
-import { angularDistortion, certaintyOf, statusOf } from '../../solver/index.ts'
+import type { Certainty, SpanFinding, StretchFinding } from '../model/findings.ts'
+import { angularDistortion, certaintyOf, deflectionRatios, statusOf } from '../../solver/index.ts'
 import type { Prepared, PreparedLine } from './prepare.ts'
 import { tiltWeights, type Settlements } from './settlement.ts'
 
@@ -109,6 +109,45 @@ export function spanFindings(prepared: Prepared, movement: LineMovement, settlem
         certainty,
       },
     ]
+  })
+}
+
+/** Turns of the chord below this are rounding, rad. */
+const NO_TURN = 1e-9
+
+/**
+ * Deflection ratio of every sagging and hogging stretch. The ratio is linear in the settlements of its two ends and of
+ * the support with the largest offset, which gives its standard deviation.
+ */
+export function stretchFindings(
+  prepared: Prepared,
+  movement: LineMovement,
+  settlements: Settlements,
+): StretchFinding[] {
+  const { supports } = movement.prepared
+  const isRising = supports.every((s, i) => i === 0 || s.x > supports[i - 1]!.x)
+  if (supports.length < 3 || !isRising) return []
+  const x = supports.map((s) => s.x)
+  const settled = supports.map((s) => settlements.value[s.support]!)
+  return deflectionRatios(x, settled, NO_TURN).map((stretch): StretchFinding => {
+    const [from, at, to] = [stretch.from, stretch.at, stretch.to].map((i) => supports[i]!)
+    const length = to!.x - from!.x
+    const share = (at!.x - from!.x) / length
+    const weights = new Float64Array(settlements.value.length)
+    weights[at!.support]! += 1 / length
+    weights[from!.support]! -= (1 - share) / length
+    weights[to!.support]! -= share / length
+    const names = prepared.building.supports
+    return {
+      kind: stretch.kind,
+      from: names[from!.support]!.id,
+      to: names[to!.support]!.id,
+      at: names[at!.support]!.id,
+      length_m: length,
+      deflection_mm: stretch.ratio * length * 1000,
+      deflection_ratio: stretch.ratio,
+      sd_ratio: sdOf(weigh(weights, settlements).factor),
+    }
   })
 }
 

@@ -84,10 +84,25 @@ export interface NodeFinding {
   rotation_rad: number
 }
 
+/** A sagging or hogging stretch of a line's settlement: the largest offset from its chord over its length. */
+export interface StretchFinding {
+  kind: 'sagging' | 'hogging'
+  from: string
+  to: string
+  /** Support with the largest offset. */
+  at: string
+  length_m: number
+  deflection_mm: number
+  deflection_ratio: number
+  sd_ratio: number
+}
+
 export interface FrameLineFinding {
   id: string
   tilt_rad: number
   spans: SpanFinding[]
+  /** By length along the line; none where fewer than three supports stand on it. */
+  stretches: StretchFinding[]
   members: MemberFinding[]
   reactions: ReactionFinding[]
   nodes: NodeFinding[]

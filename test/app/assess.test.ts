@@ -115,6 +115,23 @@ describe('any settlement', () => {
   })
 })
 
+describe('the deflection ratio', () => {
+  it('of a line that sags in the middle is its offset over its length, with the sd of the three levels (by hand)', () => {
+    const mm = exampleBuilding().supports.map((s) => (s.id === 'B2' ? 6 : 0))
+    const line = last(given([{ id: 'R0', mm: ZERO }, { id: 'R1', mm }])).frame_lines.find((l) => l.id === '2')! // prettier-ignore
+    const [stretch] = line.stretches
+    expect(stretch).toMatchObject({ kind: 'sagging', from: 'A2', to: 'C2', at: 'B2', length_m: 11.2 })
+    expect(stretch!.deflection_ratio).toBeCloseTo(0.006 / 11.2, 12)
+    // Each settlement has 0.2 sqrt 2 mm; the offset takes the middle once and the ends by half.
+    expect(stretch!.sd_ratio).toBeCloseTo((0.2e-3 * Math.SQRT2 * Math.sqrt(1 + 0.25 + 0.25)) / 11.2, 12)
+  })
+
+  it('is none for a building that only tilts', () => {
+    const mm = exampleBuilding().supports.map((s) => 2 + 0.5 * s.x_m)
+    for (const line of last(given([{ id: 'R0', mm: ZERO }, { id: 'R1', mm }])).frame_lines) expect(line.stretches).toEqual([]) // prettier-ignore
+  })
+})
+
 describe('a support that was not measured', () => {
   const mm = exampleBuilding().supports.map((s) => 0.03 * s.x_m ** 2)
   const whole = last(given([{ id: 'R0', mm: ZERO }, { id: 'R1', mm }])) // prettier-ignore

@@ -15,6 +15,7 @@ export function ledgers(input: ReportInput): Content[] {
     ...supports(input),
     { text: 'Spans', style: 'heading', headlineLevel: 1 },
     ...spans(input),
+    ...stretches(input),
     { text: 'Members', style: 'heading', headlineLevel: 1 },
     ...members(input),
     {
@@ -77,6 +78,44 @@ function spans({ findings, z }: ReportInput): Content[] {
       ]),
     ),
   )
+}
+
+/** Sagging and hogging stretches that the survey can tell from none. */
+function stretches({ findings, z }: ReportInput): Content[] {
+  const rows = findings.frame_lines
+    .flatMap((line) => line.stretches.map((stretch) => ({ line: line.id, stretch })))
+    .filter(({ stretch }) => stretch.deflection_ratio > z * stretch.sd_ratio)
+    .sort((a, b) => b.stretch.deflection_ratio - a.stretch.deflection_ratio)
+  if (rows.length === 0) return []
+  return [
+    { text: 'Deflection ratio', style: 'heading', headlineLevel: 1 },
+    ...cut(rows, 'stretches', (shown) =>
+      table(
+        [
+          { heading: 'line', width: 45 },
+          { heading: 'stretch', width: '*' },
+          { heading: 'length, m', width: 55, align: 'right' },
+          { heading: 'largest offset, mm', width: 85, align: 'right' },
+          { heading: 'at', width: 45 },
+          { heading: 'deflection ratio', width: 75, align: 'right' },
+          { heading: '±, 1/1000', width: 50, align: 'right' },
+        ],
+        shown.map(({ line, stretch }): TableCell[] => [
+          line,
+          `${stretch.kind}, ${stretch.from} to ${stretch.to}`,
+          stretch.length_m.toFixed(2),
+          millimetres(stretch.deflection_mm, 1),
+          stretch.at,
+          ratio(stretch.deflection_ratio),
+          (z * stretch.sd_ratio * 1000).toFixed(2),
+        ]),
+      ),
+    ),
+    {
+      text: 'The largest offset from the straight line between two supports over their distance, for every sagging and hogging stretch beyond the survey’s uncertainty (relative deflection: Burland and Wroth 1974). No trigger is held against it here.',
+      style: 'quiet',
+    },
+  ]
 }
 
 function members({ findings, z }: ReportInput): Content[] {
