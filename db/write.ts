@@ -101,14 +101,12 @@ export function writeStore(db: WriteDb, read: ReadStore): WriteStore {
         'DELETE FROM kept_findings WHERE rowid NOT IN (SELECT rowid FROM kept_findings ORDER BY rowid DESC LIMIT ?)',
       ).run(KEPT_FINDINGS)
     },
-    issue(report: IssuedReportView, pdf) {
+    issue(report: IssuedReportView, pdf, who) {
       db.prepare(
         `INSERT INTO report (number, label, round, issued_at, surveyed_by, assessed_by, reviewer, pages, sha256, pdf)
          VALUES (@number, @label, @round, @issued_at, @surveyed_by, @assessed_by, @reviewer, @pages, @sha256, @pdf)`,
       ).run({ ...report, pdf: Buffer.from(pdf) })
-      journal(report.issued_at, report.assessed_by || 'not named', `Issue report ${report.label}`, {
-        sha256: report.sha256,
-      })
+      journal(report.issued_at, who, `Issue report ${report.label}`, { sha256: report.sha256 })
     },
   }
 }

@@ -15,7 +15,8 @@ function gives<T>(): { answer?: T } {
 
 const text = v.pipe(v.string(), v.maxLength(10_000))
 const name = v.pipe(v.string(), v.minLength(1), v.maxLength(200))
-const path = v.pipe(v.string(), v.minLength(1), v.maxLength(4096))
+const path = v.pipe(v.string(), v.minLength(1), v.maxLength(4096), v.excludes('\0'))
+const reason = v.pipe(v.string(), v.trim(), v.maxLength(2000))
 const nothing = v.strictObject({})
 
 /** Entities and readings are checked by the reader of building files, which names every fault by its path. */
@@ -23,7 +24,19 @@ const edit = v.strictObject({
   what: name,
   changes: v.pipe(v.array(v.looseObject({ kind: v.string() })), v.maxLength(100_000)),
 })
-const draft = v.looseObject({ id: v.string(), date: v.string() })
+const rows = v.pipe(v.array(v.custom<object>((row) => typeof row === 'object' && row !== null)), v.maxLength(100_000))
+const book = v.custom<{ rows: readonly object[] }>((value) => v.is(v.looseObject({ rows }), value))
+/** What is typed of a round is kept whole or not: only what the window must be able to show again is held to a form. */
+const draft = v.looseObject({
+  id: name,
+  date: v.pipe(v.string(), v.maxLength(200)),
+  levels: v.optional(rows),
+  book: v.optional(book),
+  observer: v.optional(text),
+  instrument: v.optional(text),
+  weather: v.optional(text),
+  note: v.optional(text),
+})
 const names = { surveyed_by: text, assessed_by: text, reviewer: text }
 const reportOptions = v.strictObject({ ...names, round: name, paper: v.picklist(['A4', 'Letter']) })
 
@@ -49,8 +62,8 @@ export const requests = {
     ...gives<ProjectView>(),
     writes: true,
   },
-  'rounds/correct': { takes: v.strictObject({ round: draft, reason: name }), ...gives<ProjectView>(), writes: true },
-  'rounds/baseline': { takes: v.strictObject({ round: name, reason: name }), ...gives<ProjectView>(), writes: true },
+  'rounds/correct': { takes: v.strictObject({ round: draft, reason }), ...gives<ProjectView>(), writes: true },
+  'rounds/baseline': { takes: v.strictObject({ round: name, reason }), ...gives<ProjectView>(), writes: true },
 
   'assess/findings': { takes: v.strictObject({ round: v.optional(name) }), ...gives<Findings>(), writes: false },
 

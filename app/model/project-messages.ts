@@ -1,11 +1,16 @@
 /** Fault sentences of project files, rounds in them and issued reports. */
-import { list, NOTHING_WRITTEN, shown, type FaultMessage } from './fault-words.ts'
+import { NOTHING_WRITTEN, shown, type FaultMessage } from './fault-words.ts'
 
 export const projectMessages = {
   'core.lost': {
     what: () => 'The program behind this window does not answer.',
     kept: 'Everything that was entered before is in the file.',
     todo: () => 'Start Levelstead again; the file opens as it was.',
+  },
+  'draft.present': {
+    what: (p) => `A draft of round ${shown(p.value)} is being booked.`,
+    kept: 'The draft is as it was, and nothing of the table was written.',
+    todo: () => 'Accept or discard that draft first, or give the round of the table another name.',
   },
   'draft.unknown': {
     what: (p) => `There is no draft of a round ${shown(p.value)}.`,
@@ -45,6 +50,16 @@ export const projectMessages = {
     kept: NOTHING_WRITTEN,
     todo: () => 'Open a project, start one, or look at the example.',
   },
+  'reason.empty': {
+    what: () => 'No reason is given.',
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Say in a few words why, for whoever reads the record later.',
+  },
+  'report.overtaken': {
+    what: (p) => `The project changed while the report of round ${shown(p.value)} was being set.`,
+    kept: 'The project is as it is now; no report was issued.',
+    todo: () => 'Look at the results as they are now, then issue the report again.',
+  },
   'report.unknown': {
     what: (p) => `There is no issued report with number ${shown(p.value)}.`,
     kept: NOTHING_WRITTEN,
@@ -59,10 +74,5 @@ export const projectMessages = {
     what: (p) => `Round ${shown(p.value)} is accepted: its readings are frozen.`,
     kept: 'The readings are as they were.',
     todo: () => 'Enter a correction with a reason; the old readings stay to be seen.',
-  },
-  'round.open': {
-    what: (p) => `${list(p.detail?.points)} of round ${shown(p.value)} is not described any more.`,
-    kept: 'The building and its readings are as they were.',
-    todo: () => 'Keep the points that accepted rounds have read.',
   },
 } satisfies Record<string, FaultMessage>

@@ -1,15 +1,16 @@
 /** Building files and readings tables in and out. Nothing is written where anything of what comes in is at fault. */
 import { prepare } from '../assess/prepare.ts'
 import type { ImportedView, ProjectView } from '../contract/views.ts'
-import type { Building } from '../model/building.ts'
-import { faultsOf, InputFault } from '../model/faults.ts'
+import type { Building, Round } from '../model/building.ts'
+import { Fault, faultsOf, InputFault, type FaultRecord } from '../model/faults.ts'
 import { readBuilding } from '../model/read-building.ts'
 import { readReadings } from '../model/read-readings.ts'
 import { writeBuilding } from '../model/write-building.ts'
-import type { Context, WriteStore } from './ports.ts'
+import type { Context, ReadStore, WriteStore } from './ports.ts'
 import { open } from './project.ts'
 import { openProject } from './project-view.ts'
-import { addRound } from './rounds.ts'
+import { addRound, refuseUnlevelled } from './rounds.ts'
+import { writeNew } from './write-new.ts'
 
 /** A building file as a building whose frames can be solved. Throws an InputFault that names the file. */
 export function soundBuilding(bytes: Uint8Array, file: string): Building {
@@ -42,12 +43,28 @@ export function importBuilding({ from, to }: { from: string; to: string }, conte
 
 export function exportBuilding({ to }: { to: string }, context: Context): { written: string; drafts: string[] } {
   const { read } = openProject(context)
-  context.files.writeBytes(to, writeBuilding(read.building()))
+  writeNew(context, to, writeBuilding(read.building()))
   return { written: to, drafts: read.rounds().flatMap((r) => (r.state === 'draft' ? [r.id] : [])) }
 }
 
 export function logReadings({ from }: { from: string }, context: Context, store: WriteStore): ImportedView {
   const { rounds, columns, notes } = readReadings(context.files.readBytes(from), store.building(), from)
+  const faults = rounds.flatMap((round) => faultsOfLogged(round, store, from))
+  if (faults.length) throw new InputFault(faults)
   for (const round of rounds) addRound(store, round, context.clock.who(), context.clock.now())
   return { added: rounds.map((r) => r.id), columns, notes }
+}
+
+/** What stands against a round of a table besides its form: a draft of its name, readings that give no levels. */
+function faultsOfLogged(round: Round, store: ReadStore, file: string): FaultRecord[] {
+  try {
+    const element = { kind: 'round', id: round.id } as const
+    if (store.rounds().some((r) => r.id === round.id)) throw new Fault('draft.present', { value: round.id, element })
+    refuseUnlevelled(round, store.building())
+    return []
+  } catch (error) {
+    const faults = faultsOf(error)
+    if (!faults) throw error
+    return faults.map(({ code, place }) => ({ code, place: { file, path: `round ${round.id}`, ...place } }))
+  }
 }

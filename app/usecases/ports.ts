@@ -48,7 +48,7 @@ export interface WriteStore extends ReadStore {
   setBaseline(id: string, reason: string, who: string, when: string): void
   keepFindings(hash: string, findings: Findings): void
   /** Issued PDFs are never changed. */
-  issue(report: IssuedReportView, pdf: Uint8Array): void
+  issue(report: IssuedReportView, pdf: Uint8Array, who: string): void
 }
 
 /** Opens, makes and copies project files. */

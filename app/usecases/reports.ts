@@ -7,6 +7,7 @@ import { toBase64 } from './base64.ts'
 import type { Context } from './ports.ts'
 import { openProject } from './project-view.ts'
 import { refusalOf } from './rounds.ts'
+import { writeNew } from './write-new.ts'
 
 export async function preview(options: ReportOptions, context: Context): Promise<PdfView> {
   const { pdf, pages } = await print(options, context, 'draft')
@@ -15,9 +16,14 @@ export async function preview(options: ReportOptions, context: Context): Promise
 
 export async function issue(options: ReportOptions, context: Context): Promise<IssuedReportView> {
   const project = openProject(context)
+  const building = project.read.building()
   const { pdf, pages, label, when } = await print(options, context, 'issued')
   const { round, surveyed_by, assessed_by, reviewer } = options
+  if (context.signal.aborted || context.session.project !== project) throw new Fault('work.stopped')
   return project.write((store) => {
+    const isSame = JSON.stringify(store.building()) === JSON.stringify(building)
+    if (!isSame || labelOf(building, store.register(), round) !== label)
+      throw new Fault('report.overtaken', { value: round })
     const issued: IssuedReportView = {
       number: store.register().length + 1,
       label,
@@ -29,7 +35,7 @@ export async function issue(options: ReportOptions, context: Context): Promise<I
       pages,
       sha256: context.hasher.sha256(pdf),
     }
-    store.issue(issued, pdf)
+    store.issue(issued, pdf, context.clock.who())
     return issued
   })
 }
@@ -44,7 +50,7 @@ export function issuedPdf({ number }: { number: number }, context: Context): Pdf
 }
 
 export function savePdf({ number, to }: { number: number; to: string }, context: Context): { written: string } {
-  context.files.writeBytes(to, pdfOf(number, context))
+  writeNew(context, to, pdfOf(number, context))
   return { written: to }
 }
 

@@ -1,7 +1,7 @@
 /** Rounds: drafted while they are typed, accepted once they hold, corrected only by a new version with a reason. */
 import type { ProjectView } from '../contract/views.ts'
 import { levelRound } from '../assess/levels.ts'
-import { criteriaOf, type Building } from '../model/building.ts'
+import { criteriaOf, type Building, type Round } from '../model/building.ts'
 import { checkRound } from '../model/check-building.ts'
 import { Fault } from '../model/faults.ts'
 import type { Context, DraftRound, ReadStore, WriteStore } from './ports.ts'
@@ -41,10 +41,13 @@ export function addRound(store: WriteStore, round: DraftRound, who: string, when
 }
 
 export function correct(
-  { round, reason }: { round: object; reason: string },
+  { round, reason }: { round: { id: string }; reason: string },
   { clock }: Context,
   store: WriteStore,
 ): ProjectView {
+  refuseEmpty(reason)
+  const { id } = round
+  if (!store.building().survey.rounds.some((r) => r.id === id)) throw refusalOf(store, id)
   store.correct(soundRound(round, store.building()), reason, clock.who(), clock.now())
   return projectView(store)
 }
@@ -54,6 +57,7 @@ export function setBaseline(
   { clock }: Context,
   store: WriteStore,
 ): ProjectView {
+  refuseEmpty(reason)
   if (!store.building().survey.rounds.some((r) => r.id === round)) throw refusalOf(store, round)
   store.setBaseline(round, reason, clock.who(), clock.now())
   return projectView(store)
@@ -70,6 +74,15 @@ export function refusalOf(store: ReadStore, id: string): Fault {
 /** The round, held to its form and adjusted once, so that none is accepted whose levels cannot be had. */
 function soundRound(value: object, building: Building): DraftRound {
   const round = checkRound(value, building)
-  levelRound(building, round, criteriaOf(building).confidence, Z)
+  refuseUnlevelled(round, building)
   return round
+}
+
+/** Refuses a round whose levels cannot be had. */
+export function refuseUnlevelled(round: Round, building: Building): void {
+  levelRound(building, round, criteriaOf(building).confidence, Z)
+}
+
+function refuseEmpty(reason: string): void {
+  if (reason.trim() === '') throw new Fault('reason.empty')
 }
