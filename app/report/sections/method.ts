@@ -1,5 +1,7 @@
 /** Method and assumptions, limits with their sources, what is not covered, sign-off and verification. */
 import type { Content, TableCell } from 'pdfmake/interfaces.js'
+import type { Triggers } from '../../model/building.ts'
+import { limitSetOf } from '../../model/limit-sets.ts'
 import { percent, ratio } from '../../model/numbers.ts'
 import type { ReportInput } from '../input.ts'
 import { QUIET, table } from '../style.ts'
@@ -58,7 +60,7 @@ export function limits({ criteria }: ReportInput): Content[] {
               'angular distortion',
               ratio(criteria.angular_distortion.amber),
               ratio(criteria.angular_distortion.red),
-              '1/500 recommended limit and 1/150 structural damage of frames: Skempton and MacDonald, Proc. ICE 5 (III), 1956, 727–768; Bjerrum, Proc. European Conf. SMFE, Wiesbaden, 1963, vol. 2, 135–137; EN 1997-1:2004 Annex H',
+              distortionSource(criteria.angular_distortion),
             ],
           ],
         ),
@@ -69,6 +71,13 @@ export function limits({ criteria }: ReportInput): Content[] {
       ],
     },
   ]
+}
+
+/** Where the triggers come from: a published set, or the assessor, who then answers for them. */
+function distortionSource(triggers: Triggers): string {
+  const set = limitSetOf(triggers)
+  if (set) return `${set.structure}. ${set.source}`
+  return 'the assessor’s choice, of no published set known here'
 }
 
 export function notCovered(): Content[] {
