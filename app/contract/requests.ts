@@ -69,7 +69,7 @@ export const requests = {
 
   'exchange/import': { takes: v.strictObject({ from: path, to: path }), ...gives<ProjectView>(), writes: false },
   'exchange/export': {
-    takes: v.strictObject({ to: path }),
+    takes: v.strictObject({ to: path, replace: v.optional(v.boolean()) }),
     ...gives<{ written: string; drafts: string[] }>(),
     writes: false,
   },

@@ -68,7 +68,7 @@ const COMMAND: Record<CommandName, (given: Given) => Promise<number>> = {
 
   async export({ files: [file, out] }) {
     const { ask, close } = await opened(file!)
-    const { drafts } = await ask('exchange/export', { to: out! })
+    const { drafts } = await ask('exchange/export', { to: out!, replace: true })
     close()
     print(`Wrote ${out!}.`)
     if (drafts.length) tell(`Left out, not accepted yet: ${drafts.join(', ')}.`)

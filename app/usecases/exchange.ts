@@ -41,9 +41,15 @@ export function importBuilding({ from, to }: { from: string; to: string }, conte
   return open({ path: to }, context)
 }
 
-export function exportBuilding({ to }: { to: string }, context: Context): { written: string; drafts: string[] } {
+/** A building file holds nothing that its project has not: one that was asked for by name may be written again. */
+export function exportBuilding(
+  { to, replace }: { to: string; replace?: boolean },
+  context: Context,
+): { written: string; drafts: string[] } {
   const { read } = openProject(context)
-  writeNew(context, to, writeBuilding(read.building()))
+  const text = writeBuilding(read.building())
+  if (replace) context.files.writeBytes(to, text)
+  else writeNew(context, to, text)
   return { written: to, drafts: read.rounds().flatMap((r) => (r.state === 'draft' ? [r.id] : [])) }
 }
 
