@@ -24,8 +24,20 @@ const edit = v.strictObject({
   what: name,
   changes: v.pipe(v.array(v.looseObject({ kind: v.string() })), v.maxLength(100_000)),
 })
+/** A round as it is typed: where a cell is no number yet, its text stands in the number's place. */
+export interface TypedRound {
+  id: string
+  date: string
+  levels?: readonly object[]
+  book?: { rows: readonly object[]; sd_mm_per_sqrt_km?: unknown; sd_mm_per_setup?: unknown }
+  observer?: string
+  instrument?: string
+  weather?: string
+  note?: string
+}
+
 const rows = v.pipe(v.array(v.custom<object>((row) => typeof row === 'object' && row !== null)), v.maxLength(100_000))
-const book = v.custom<{ rows: readonly object[] }>((value) => v.is(v.looseObject({ rows }), value))
+const book = v.custom<NonNullable<TypedRound['book']>>((value) => v.is(v.looseObject({ rows }), value))
 /** What is typed of a round is kept whole or not: only what the window must be able to show again is held to a form. */
 const draft = v.looseObject({
   id: name,
@@ -93,8 +105,14 @@ export const requests = {
 } as const satisfies Record<string, { takes: v.GenericSchema; answer?: unknown; writes: boolean }>
 
 export type RequestName = keyof typeof requests
-export type Input<K extends RequestName> = K extends 'describe/edit'
-  ? Edit
+/** What is more narrowly typed than its validator can say. */
+interface Typed {
+  'describe/edit': Edit
+  'rounds/draft': TypedRound
+  'rounds/correct': { round: TypedRound; reason: string }
+}
+export type Input<K extends RequestName> = K extends keyof Typed
+  ? Typed[K]
   : v.InferOutput<(typeof requests)[K]['takes']>
 export type Answer<K extends RequestName> = (typeof requests)[K] extends { answer?: infer A }
   ? Exclude<A, undefined>

@@ -77,6 +77,8 @@ export async function dispatch(name: string, input: unknown, context: Context): 
 function answer(name: string, input: unknown, context: Context): unknown {
   if (!Object.hasOwn(requests, name)) throw new Fault('request.unknown', { value: name })
   const request = requests[name as RequestName]
+  // To the validator a list is an object whose keys are none of its business.
+  if (Array.isArray(input)) throw new Fault('request.malformed', { value: name })
   const parsed = v.safeParse(request.takes as v.GenericSchema, input, { abortEarly: true })
   if (!parsed.success) {
     const path = v.getDotPath(parsed.issues[0])

@@ -1,4 +1,5 @@
 /** Rounds: drafted while they are typed, accepted once they hold, corrected only by a new version with a reason. */
+import type { TypedRound } from '../contract/requests.ts'
 import type { ProjectView } from '../contract/views.ts'
 import { levelRound } from '../assess/levels.ts'
 import { criteriaOf, type Building, type Round } from '../model/building.ts'
@@ -11,7 +12,7 @@ import { projectView } from './project-view.ts'
 const Z = 1.96
 
 /** What is typed is kept as it is, whole or not. */
-export function saveDraft(draft: object, { clock }: Context, store: WriteStore): ProjectView {
+export function saveDraft(draft: TypedRound, { clock }: Context, store: WriteStore): ProjectView {
   store.putDraft(draft as DraftRound, clock.now())
   return projectView(store)
 }
@@ -41,7 +42,7 @@ export function addRound(store: WriteStore, round: DraftRound, who: string, when
 }
 
 export function correct(
-  { round, reason }: { round: { id: string }; reason: string },
+  { round, reason }: { round: TypedRound; reason: string },
   { clock }: Context,
   store: WriteStore,
 ): ProjectView {

@@ -68,6 +68,19 @@ describe('a program that is killed', () => {
   })
 })
 
+const canMount = process.platform === 'linux' && spawnSync('unshare', ['-m', 'true']).status === 0
+
+/** What a script says that runs where a disk has been made of the folder, in a mount space of its own. */
+function mountedRun(script: string, folder: string, make: string, alone = true): unknown {
+  const shell = ['sh', '-c', `${make} && exec "$2" "$3" "$1"`, 'sh']
+  const words = [...shell, folder, process.execPath, new URL(script, import.meta.url).pathname]
+  const [program, ...rest] = alone ? ['unshare', '-m', ...words] : words
+  const { stdout, stderr } = spawnSync(program!, rest, { encoding: 'utf8' })
+  spawnSync('chmod', ['0755', folder])
+  expect(stderr).toBe('')
+  return JSON.parse(stdout)
+}
+
 describe('a full disk', () => {
   it('is a fault, and the project stays as it was', () => {
     const path = madeProject()
@@ -82,32 +95,34 @@ describe('a full disk', () => {
     expect(opened(path).read.building()).toEqual(smallBuilding())
   })
 
-  // A disk of 300 kB can be had by the superuser of Linux alone, in a mount space of the test's own.
-  const canMount = process.platform === 'linux' && spawnSync('unshare', ['-m', 'true']).status === 0
+  // A disk of 300 kB can be had by the superuser of Linux alone.
   it.runIf(canMount)('takes no new project and no long draft, and keeps what it holds', () => {
     const folder = dirname(temporary())
-    const result = spawnSync(
-      'unshare',
-      [
-        '-m',
-        'sh',
-        '-c',
-        'mount -t tmpfs -o size=300k none "$1" && exec "$2" "$3" "$1"',
-        'sh',
-        folder,
-        process.execPath,
-        new URL('full-disk.ts', import.meta.url).pathname,
-      ],
-      { encoding: 'utf8' },
-    )
-    expect(result.stderr).toBe('')
-    expect(JSON.parse(result.stdout)).toEqual({
+    expect(mountedRun('full-disk.ts', folder, 'mount -t tmpfs -o size=300k none "$1"')).toEqual({
       draft: 'disk.full',
       making: 'disk.full',
       duplicating: 'disk.full',
       left: ['store.levelstead'],
       name: smallBuilding().name,
       drafts: 0,
+    })
+  })
+})
+
+describe('a file that may not be written to', () => {
+  // The superuser writes whatever the file's permissions are, but not on a disk that takes nothing.
+  const isSuperuser = process.getuid?.() === 0
+  it.runIf(canMount || !isSuperuser)('opens for reading, says so, and refuses every write', () => {
+    const folder = dirname(madeProject())
+    const seen = isSuperuser
+      ? mountedRun('read-only.ts', folder, 'mount --bind "$1" "$1" && mount -o remount,ro,bind "$1"')
+      : mountedRun('read-only.ts', folder, 'chmod 0555 "$1"', false)
+    expect(seen).toEqual({
+      readOnly: true,
+      name: smallBuilding().name,
+      edit: 'file.unwritable',
+      making: 'file.unwritable',
+      left: ['store.levelstead'],
     })
   })
 })
