@@ -15,6 +15,7 @@ export default defineConfig({
     // Nothing inline: the content policy lets in files of ours alone.
     assetsInlineLimit: 0,
     modulePreload: { polyfill: false },
+    rolldownOptions: { checks: { pluginTimings: false } },
     chunkSizeWarningLimit: 1500,
   },
 })

@@ -68,7 +68,9 @@ function readCommand(command: CommandName, words: readonly string[]): Given {
   }
   for (const word of form.needs.slice(files.length))
     faults.push({ code: 'argument.missing', place: { value: `levelstead ${command}`, path: word, detail } })
-  for (const file of files.slice(form.needs.length + form.may.length))
+  // What follows a misspelt option is its value, most likely.
+  const isMisspelt = faults.some((fault) => fault.code === 'option.unknown')
+  for (const file of isMisspelt ? [] : files.slice(form.needs.length + form.may.length))
     faults.push({ code: 'argument.surplus', place: { value: file, detail } })
   if (command === 'report' && options.pdf === undefined && !faults.some((f) => f.place.value === '--pdf'))
     faults.push({ code: 'argument.missing', place: { value: 'levelstead report', path: '--pdf OUT.pdf', detail } })
