@@ -85,7 +85,7 @@ export interface FolderView {
   folder: string
   parent: string | null
   folders: string[]
-  /** Project files and building files in it. */
+  /** Files in it of the kinds that are read or written: projects, building files, readings tables, reports. */
   files: string[]
 }
 

@@ -101,7 +101,7 @@ function listFolder(folder: string): FolderView {
       if (entry.name.startsWith('.')) continue
       const stat = entry.isSymbolicLink() ? statSync(join(path, entry.name), { throwIfNoEntry: false }) : entry
       if (stat?.isDirectory()) folders.push(entry.name)
-      else if (stat?.isFile() && /\.(levelstead|building\.json)$/i.test(entry.name)) files.push(entry.name)
+      else if (stat?.isFile() && /\.(levelstead|json|csv|tsv|txt|pdf)$/i.test(entry.name)) files.push(entry.name)
     }
     const order = new Intl.Collator('en', { numeric: true }).compare
     const parent = dirname(path)

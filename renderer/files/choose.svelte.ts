@@ -3,18 +3,12 @@
  * through the core.
  */
 import { ask, hasDialogs } from '../client.svelte.ts'
-
-export interface FileWish {
-  does: 'open' | 'save'
-  title: string
-  /** Extensions without their dot; the first is given to a name typed without one. */
-  kinds: readonly string[]
-  /** Proposed name, without its extension. */
-  name?: string
-}
+import { withKind, type FileWish } from './wish.ts'
 
 export class FileAsking {
   wish = $state.raw<FileWish | null>(null)
+  /** The folder that was looked at last. */
+  folder?: string
   #settle: ((path: string | null) => void) | undefined
 
   ask(wish: FileWish): Promise<string | null> {
@@ -24,10 +18,11 @@ export class FileAsking {
     return new Promise((settle) => (this.#settle = settle))
   }
 
-  answer(path: string | null): void {
-    const wish = this.wish
+  /** The answer to a wish. One that has been answered already, or given up for another, is past answering. */
+  answer(wish: FileWish, path: string | null): void {
+    if (wish !== this.wish) return
     this.wish = null
-    this.#settle?.(path === null || !wish || wish.does === 'open' ? path : withKind(path, wish.kinds))
+    this.#settle?.(path === null || wish.does === 'open' ? path : withKind(path, wish.kinds))
     this.#settle = undefined
   }
 
@@ -42,10 +37,4 @@ export class FileAsking {
 
 export function chooseFile(): FileAsking {
   return new FileAsking()
-}
-
-/** The path with the first of the kinds, unless it ends in one of them. */
-export function withKind(path: string, kinds: readonly string[]): string {
-  const isKnown = kinds.some((kind) => path.toLowerCase().endsWith(`.${kind}`))
-  return isKnown || !kinds[0] ? path : `${path}.${kinds[0]}`
 }

@@ -4,6 +4,7 @@ import type { Building, Round } from '../../app/model/building.ts'
 import type { Edit } from '../../app/model/changes.ts'
 import { call } from '../client.svelte.ts'
 import { contextOf } from './context.ts'
+import type { WorkState } from './work.svelte.ts'
 
 /** A round as it is typed, whole or not. */
 export interface Draft extends Round {
@@ -16,6 +17,11 @@ export interface Draft extends Round {
 export class ProjectState {
   #view = $state.raw<ProjectView | null>(null)
   #text = ''
+  readonly #work: WorkState
+
+  constructor(work: WorkState) {
+    this.#work = work
+  }
 
   get view(): ProjectView | null {
     return this.#view
@@ -40,7 +46,7 @@ export class ProjectState {
   }
 
   async open(path: string): Promise<void> {
-    this.#take(await call('project/open', { path }))
+    this.#take(await this.#work.run('Opening the file', (following) => call('project/open', { path }, following)))
   }
 
   async start(path: string, name: string): Promise<void> {
@@ -52,11 +58,15 @@ export class ProjectState {
   }
 
   async import(from: string, to: string): Promise<void> {
-    this.#take(await call('exchange/import', { from, to }))
+    this.#take(
+      await this.#work.run('Reading the building file', (following) =>
+        call('exchange/import', { from, to }, following),
+      ),
+    )
   }
 
   async duplicate(path: string): Promise<void> {
-    this.#take(await call('project/duplicate', { path }))
+    this.#take(await this.#work.run('Copying the file', (following) => call('project/duplicate', { path }, following)))
   }
 
   async close(): Promise<void> {
@@ -70,7 +80,7 @@ export class ProjectState {
 
   /** Adds the rounds of a readings table. */
   async log(from: string): Promise<ImportedView> {
-    const added = await call('exchange/log', { from })
+    const added = await this.#work.run('Reading the table', (following) => call('exchange/log', { from }, following))
     await this.resume()
     return added
   }

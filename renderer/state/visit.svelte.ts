@@ -11,11 +11,13 @@ import { call } from '../client.svelte.ts'
 import type { Visit } from '../strip/places.ts'
 import { contextOf } from './context.ts'
 import type { Draft, ProjectState } from './project.svelte.ts'
+import type { WorkState } from './work.svelte.ts'
 
 type Made<T> = { value: T; faults?: undefined } | { value?: undefined; faults: readonly FaultRecord[] }
 
 export class VisitState {
   readonly #project: ProjectState
+  readonly #work: WorkState
   #chosen = $state<string | null>(null)
   /** Gives the round as it is being typed; Log sets it. */
   typing: () => Draft | null = () => null
@@ -23,8 +25,9 @@ export class VisitState {
   readonly #statuses = $derived(new Map(this.#rounds.map((r) => [r.id, r.status])))
   #before: Prepared | undefined
 
-  constructor(project: ProjectState) {
+  constructor(project: ProjectState, work: WorkState) {
     this.#project = project
+    this.#work = work
   }
 
   readonly visits = $derived.by((): Visit[] => {
@@ -111,12 +114,15 @@ export class VisitState {
     const building = this.#project.view?.building
     if (!building) return
     try {
-      const { rounds } = await call('assess/findings', {})
+      const { rounds } = await this.#work.run('Assessing the visits', (following) =>
+        call('assess/findings', {}, following),
+      )
       if (this.#project.view?.building === building) this.#rounds = rounds
     } catch (error) {
       // A building that cannot be assessed yet has no flags; the place Assess says why.
-      if (!faultsOf(error)) throw error
-      this.#rounds = []
+      const faults = faultsOf(error)
+      if (!faults) throw error
+      if (!faults.some(({ code }) => code === 'work.stopped')) this.#rounds = []
     }
   }
 }

@@ -1,0 +1,15 @@
+/** What is asked of the person where a file is to be opened or written. */
+export interface FileWish {
+  does: 'open' | 'save'
+  title: string
+  /** Extensions without their dot; the first is given to a name typed without one. */
+  kinds: readonly string[]
+  /** Proposed name, without its extension. */
+  name?: string
+}
+
+/** The path with the first of the kinds, unless it ends in one of them. */
+export function withKind(path: string, kinds: readonly string[]): string {
+  const isKnown = kinds.some((kind) => path.toLowerCase().endsWith(`.${kind}`))
+  return isKnown || !kinds[0] ? path : `${path}.${kinds[0]}`
+}
