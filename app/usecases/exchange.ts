@@ -10,7 +10,7 @@ import type { Context, ReadStore, WriteStore } from './ports.ts'
 import { open } from './project.ts'
 import { openProject } from './project-view.ts'
 import { addRound, refuseUnlevelled } from './rounds.ts'
-import { writeNew } from './write-new.ts'
+import { writeBuildingFile, writeNew } from './write-new.ts'
 
 /** A building file as a building whose frames can be solved. Throws an InputFault that names the file. */
 export function soundBuilding(bytes: Uint8Array, file: string): Building {
@@ -48,7 +48,7 @@ export function exportBuilding(
 ): { written: string; drafts: string[] } {
   const { read } = openProject(context)
   const text = writeBuilding(read.building())
-  if (replace) context.files.writeBytes(to, text)
+  if (replace) writeBuildingFile(context, to, text)
   else writeNew(context, to, text)
   return { written: to, drafts: read.rounds().flatMap((r) => (r.state === 'draft' ? [r.id] : [])) }
 }

@@ -3,6 +3,7 @@ import { existsSync, readFileSync, readdirSync, writeFileSync } from 'node:fs'
 import { dirname } from 'node:path'
 import { describe, expect, it, test } from 'vitest'
 import type { Building } from '../../../app/model/building.ts'
+import { moveSupport } from '../../../app/model/edits/supports.ts'
 import { writeBuilding } from '../../../app/model/write-building.ts'
 import { desk } from '../../support/desk.ts'
 import { disagreements } from '../../support/disagreements.ts'
@@ -76,8 +77,24 @@ describe('a building file', () => {
     await ask('project/example', { path })
     const before = readFileSync(path)
     expect((await refused('exchange/export', { to: path }))[0]!.code).toBe('file.exists')
+    expect((await refused('exchange/export', { to: path, replace: true }))[0]!.code).toBe('file.exists')
     expect((await refused('exchange/export', { to: at('nowhere/b.json') }))[0]!.code).toBe('folder.missing')
     expect(readFileSync(path).equals(before)).toBe(true)
+  })
+
+  it('takes the place of an earlier building file where that is asked for, and of nothing else', async () => {
+    const { ask, at, edit, refused } = desk()
+    await ask('project/example', { path: at('example.levelstead') })
+    await ask('exchange/export', { to: at('out.json') })
+    const building = await edit((b) => moveSupport(b, 'A1', { base_m: -3 }))
+    expect((await refused('exchange/export', { to: at('out.json') }))[0]!.code).toBe('file.exists')
+    await ask('exchange/export', { to: at('out.json'), replace: true })
+    expect(readFileSync(at('out.json'), 'utf8')).toBe(writeBuilding(building))
+    for (const held of ['%PDF-1.7 issued', '{ "format": "levelstead-findings" }', 'round,date,point', '']) {
+      writeFileSync(at('held'), held)
+      expect((await refused('exchange/export', { to: at('held'), replace: true }))[0]!.code, held).toBe('file.exists')
+      expect(readFileSync(at('held'), 'utf8')).toBe(held)
+    }
   })
 })
 
