@@ -6,7 +6,16 @@
 import * as v from 'valibot'
 import type { Edit } from '../model/changes.ts'
 import type { Findings } from '../model/findings.ts'
-import type { AboutView, FolderView, ImportedView, IssuedReportView, PdfView, ProjectView, VerifyRow } from './views.ts'
+import type {
+  AboutView,
+  ExportedView,
+  FolderView,
+  ImportedView,
+  IssuedReportView,
+  PdfView,
+  ProjectView,
+  VerifyRow,
+} from './views.ts'
 
 /** Marks the type of an answer; it has no value at run time. */
 function gives<T>(): { answer?: T } {
@@ -82,7 +91,7 @@ export const requests = {
   'exchange/import': { takes: v.strictObject({ from: path, to: path }), ...gives<ProjectView>(), writes: false },
   'exchange/export': {
     takes: v.strictObject({ to: path, replace: v.optional(v.boolean()) }),
-    ...gives<{ written: string; drafts: string[] }>(),
+    ...gives<ExportedView>(),
     writes: false,
   },
   'exchange/log': { takes: v.strictObject({ from: path }), ...gives<ImportedView>(), writes: true },

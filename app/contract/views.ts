@@ -1,5 +1,6 @@
 /** What the window and the command line are given: plain data, no classes, ready for any wire. */
 import type { Building, LevelBook, GivenLevel } from '../model/building.ts'
+import type { FaultRecord } from '../model/faults.ts'
 import type { Findings } from '../model/findings.ts'
 
 export type RoundState = 'draft' | 'accepted' | 'superseded'
@@ -73,6 +74,14 @@ export interface PdfView {
 
 export type { VerifyRow } from '../model/verification.ts'
 
+export interface ExportedView {
+  written: string
+  /** Rounds left out because they are not accepted yet. */
+  drafts: string[]
+  /** What is unfinished in the description: the file cannot be imported until it is mended. */
+  unfinished: FaultRecord[]
+}
+
 export interface ImportedView {
   added: string[]
   /** How each column of a readings table was read. */
@@ -91,6 +100,7 @@ export interface FolderView {
 
 export interface AboutView {
   version: string
+  build: string
   /** Which shell asks. */
   shell: 'electron' | 'browser' | 'command line'
   home: string

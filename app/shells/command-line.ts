@@ -5,6 +5,7 @@
 import type { Answer, Input, RequestName } from '../contract/requests.ts'
 import type { Envelope } from '../contract/wire.ts'
 import { criteriaOf } from '../model/building.ts'
+import { errorLine } from '../model/fault-line.ts'
 import { Fault, faultsOf, InputFault } from '../model/faults.ts'
 import { soundBuilding } from '../usecases/exchange.ts'
 import { dispatch } from '../usecases/handlers.ts'
@@ -68,10 +69,14 @@ const COMMAND: Record<CommandName, (given: Given) => Promise<number>> = {
 
   async export({ files: [file, out] }) {
     const { ask, close } = await opened(file!)
-    const { drafts } = await ask('exchange/export', { to: out!, replace: true })
+    const { drafts, unfinished } = await ask('exchange/export', { to: out!, replace: true })
     close()
     print(`Wrote ${out!}.`)
     if (drafts.length) tell(`Left out, not accepted yet: ${drafts.join(', ')}.`)
+    if (unfinished.length) {
+      tell('The description is unfinished; before the file can be imported again:')
+      for (const fault of unfinished) tell(errorLine(fault, out).replace('error', 'unfinished'))
+    }
     return 0
   },
 
@@ -94,7 +99,7 @@ const COMMAND: Record<CommandName, (given: Given) => Promise<number>> = {
     if (typeof json === 'string') {
       const text = `${JSON.stringify(findings, null, 2)}\n`
       if (json === '-') print(text)
-      else context.files.writeBytes(json, text)
+      else writeResult(context, json, text)
     }
     close()
     const text = summary(findings, intervalFactor(confidence))
@@ -114,7 +119,7 @@ const COMMAND: Record<CommandName, (given: Given) => Promise<number>> = {
       assessed_by: '',
       reviewer: '',
     })
-    context.files.writeBytes(options.pdf as string, Buffer.from(pdf, 'base64'))
+    writeResult(context, options.pdf as string, Buffer.from(pdf, 'base64'))
     close()
     print(`Wrote ${options.pdf as string}: round ${round}, ${pages} pages.`)
     tell('A draft for review, not entered in the register; issue it in the window to give it a number.')
@@ -169,6 +174,16 @@ const noProjects: Projects = {
 
 function refuse(): never {
   throw new Error('this command opens no project')
+}
+
+/** Results of an earlier run are written over; a project or a building file never is: it is somebody's work. */
+function writeResult({ files }: Context, path: string, bytes: Uint8Array | string): void {
+  if (files.exists(path)) {
+    const head = Buffer.from(files.readBytes(path).subarray(0, 200)).toString('latin1')
+    if (head.startsWith('SQLite format 3') || /^\s*\{\s*"format"\s*:\s*"levelstead-building"/.test(head))
+      throw new Fault('file.exists', { file: path })
+  }
+  files.writeBytes(path, bytes)
 }
 
 /** A project or a building file, told apart by its first bytes. */

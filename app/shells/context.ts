@@ -3,12 +3,12 @@
  * the printer are loaded on their first use only, so that a command that needs neither starts at once.
  */
 import { createHash } from 'node:crypto'
-import { readFileSync } from 'node:fs'
+import { existsSync, readFileSync } from 'node:fs'
 import { userInfo } from 'node:os'
 import { join } from 'node:path'
 import type { Stop } from '../contract/wire.ts'
 import type { Clock, Context, Hasher, Printer, Projects, Session } from '../usecases/ports.ts'
-import { rootFrom } from './freshness.ts'
+import { rootFrom, stampFile } from './freshness.ts'
 import { nodeFiles } from './node-files.ts'
 
 export type ShellName = Context['about']['shell']
@@ -24,6 +24,12 @@ export interface ContextParts {
 export function programVersion(): string {
   const text = readFileSync(join(rootFrom(import.meta.url), 'package.json'), 'utf8')
   return (JSON.parse(text) as { version: string }).version
+}
+
+/** Tells builds of one version apart, so that findings kept by one are not taken for another's. */
+function programBuild(): string {
+  const stamp = stampFile(rootFrom(import.meta.url), 'core')
+  return existsSync(stamp) ? readFileSync(stamp, 'utf8').slice(0, 8) : ''
 }
 
 /** The name under which the operating system knows the person; it stands in the audit trail. */
@@ -68,6 +74,6 @@ export function nodeContext(parts: ContextParts): Context {
     session: parts.session,
     signal: parts.signal ?? { aborted: false },
     progress: parts.progress ?? (() => undefined),
-    about: { version: programVersion(), shell: parts.shell },
+    about: { version: programVersion(), build: programBuild(), shell: parts.shell },
   }
 }

@@ -13,7 +13,9 @@ export function findings({ round }: { round?: string }, context: Context): Findi
   const project = openProject(context)
   const building = project.read.building()
   if (round !== undefined && !building.survey.rounds.some((r) => r.id === round)) throw refusalOf(project.read, round)
-  const hash = context.hasher.sha256(JSON.stringify([context.about.version, building, round ?? null]))
+  const hash = context.hasher.sha256(
+    JSON.stringify([context.about.version, context.about.build, building, round ?? null]),
+  )
   const kept = project.read.keptFindings(hash)
   if (kept) return kept
   const found = assessPrepared(prepare(building), round, (done, of, id) => {

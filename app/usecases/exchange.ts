@@ -1,6 +1,6 @@
 /** Building files and readings tables in and out. Nothing is written where anything of what comes in is at fault. */
 import { prepare } from '../assess/prepare.ts'
-import type { ImportedView, ProjectView } from '../contract/views.ts'
+import type { ExportedView, ImportedView, ProjectView } from '../contract/views.ts'
 import type { Building, Round } from '../model/building.ts'
 import { Fault, faultsOf, InputFault, type FaultRecord } from '../model/faults.ts'
 import { readBuilding } from '../model/read-building.ts'
@@ -42,15 +42,24 @@ export function importBuilding({ from, to }: { from: string; to: string }, conte
 }
 
 /** A building file holds nothing that its project has not: one that was asked for by name may be written again. */
-export function exportBuilding(
-  { to, replace }: { to: string; replace?: boolean },
-  context: Context,
-): { written: string; drafts: string[] } {
+export function exportBuilding({ to, replace }: { to: string; replace?: boolean }, context: Context): ExportedView {
   const { read } = openProject(context)
   const text = writeBuilding(read.building())
   if (replace) writeBuildingFile(context, to, text)
   else writeNew(context, to, text)
-  return { written: to, drafts: read.rounds().flatMap((r) => (r.state === 'draft' ? [r.id] : [])) }
+  const drafts = read.rounds().flatMap((r) => (r.state === 'draft' ? [r.id] : []))
+  return { written: to, drafts, unfinished: unfinishedIn(text) }
+}
+
+function unfinishedIn(text: string): FaultRecord[] {
+  try {
+    prepare(readBuilding(text))
+    return []
+  } catch (error) {
+    const faults = faultsOf(error)
+    if (!faults) throw error
+    return [...faults]
+  }
 }
 
 export function logReadings({ from }: { from: string }, context: Context, store: WriteStore): ImportedView {

@@ -108,7 +108,7 @@ export interface Context {
   session: Session
   signal: Stop
   progress(done: number, of: number, what: string): void
-  about: { version: string; shell: 'electron' | 'browser' | 'command line' }
+  about: { version: string; build: string; shell: 'electron' | 'browser' | 'command line' }
 }
 
 /** The project that this window or command has open. */

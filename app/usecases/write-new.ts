@@ -18,8 +18,13 @@ const BEGINNING = 200
 /** Writes a file that is not there yet, or is an earlier building file. Throws `file.exists` where it is another. */
 export function writeBuildingFile(context: Context, path: string, text: string): void {
   const { files } = context
-  if (!files.exists(path) || !isBuildingFile(files.readBytes(path))) writeNew(context, path, text)
+  if (!files.exists(path) || !mayBeReplaced(files.readBytes(path))) writeNew(context, path, text)
   else files.writeBytes(path, text)
+}
+
+/** An empty file, as a script makes one to hold a name, has nothing to lose either. */
+function mayBeReplaced(bytes: Uint8Array): boolean {
+  return bytes.length === 0 || isBuildingFile(bytes)
 }
 
 function isBuildingFile(bytes: Uint8Array): boolean {

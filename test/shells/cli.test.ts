@@ -124,6 +124,24 @@ describe('levelstead report', () => {
   })
 })
 
+describe('results', () => {
+  it('may be written again, but never over a project or a building file', () => {
+    for (let i = 0; i < 2; i++) expect(bench.run('assess', 'x.levelstead', '--json', 'again.json').code).toBe(0)
+    const before = ['x.levelstead', 'x.building.json'].map((file) => readFileSync(bench.path(file)))
+    for (const target of ['x.levelstead', 'x.building.json']) {
+      expect(bench.run('assess', 'x.levelstead', '--json', target).code).toBe(2)
+      expect(bench.run('report', 'x.levelstead', '--pdf', target).code).toBe(2)
+    }
+    expect(before.map((bytes, i) => bytes.equals(readFileSync(bench.path(['x.levelstead', 'x.building.json'][i]!))))).toEqual([true, true]) // prettier-ignore
+  })
+
+  it('of export may be written again, and into a file that a script has made empty', () => {
+    writeFileSync(bench.path('made.building.json'), '')
+    for (let i = 0; i < 2; i++) expect(bench.run('export', 'x.levelstead', 'made.building.json').code).toBe(0)
+    expect(bench.run('export', 'x.levelstead', 'x.levelstead').code).toBe(2)
+  })
+})
+
 describe('levelstead verify', () => {
   it('prints every check with its source and says that all agree', () => {
     const { code, out } = bench.run('verify')

@@ -52,7 +52,7 @@ export function desk(parts: Partial<Context> = {}): Desk {
     session: { project: null },
     signal: { aborted: false },
     progress: () => undefined,
-    about: { version: '0', shell: 'command line' },
+    about: { version: '0', build: '', shell: 'command line' },
     ...parts,
   }
   onTestFinished(() => {

@@ -90,11 +90,28 @@ describe('a building file', () => {
     expect((await refused('exchange/export', { to: at('out.json') }))[0]!.code).toBe('file.exists')
     await ask('exchange/export', { to: at('out.json'), replace: true })
     expect(readFileSync(at('out.json'), 'utf8')).toBe(writeBuilding(building))
-    for (const held of ['%PDF-1.7 issued', '{ "format": "levelstead-findings" }', 'round,date,point', '']) {
+    for (const held of ['%PDF-1.7 issued', '{ "format": "levelstead-findings" }', 'round,date,point']) {
       writeFileSync(at('held'), held)
       expect((await refused('exchange/export', { to: at('held'), replace: true }))[0]!.code, held).toBe('file.exists')
       expect(readFileSync(at('held'), 'utf8')).toBe(held)
     }
+    writeFileSync(at('empty'), '')
+    await ask('exchange/export', { to: at('empty'), replace: true })
+    expect(readFileSync(at('empty'), 'utf8')).toBe(writeBuilding(building))
+  })
+
+  it('says what is unfinished, since such a file cannot be imported yet', async () => {
+    const { ask, at } = desk()
+    await ask('project/new', { path: at('p.levelstead'), name: 'Store' })
+    await ask('describe/edit', {
+      what: 'Begin a line',
+      changes: [
+        { kind: 'line', id: 'A', before: null, after: { id: 'A' } },
+        { kind: 'node', line: 'A', id: 'a', before: null, after: { id: 'a', x_m: 0, z_m: 0 } },
+      ],
+    })
+    const { unfinished } = await ask('exchange/export', { to: at('p.json') })
+    expect(unfinished.map((fault) => fault.code)).toEqual(['line.unsupported'])
   })
 })
 

@@ -99,6 +99,7 @@ it('a building is described, visited twice, assessed, reported, exported and mad
   expect(await ask('exchange/export', { to: at('tower.building.json') })).toEqual({
     written: at('tower.building.json'),
     drafts: ['R2'],
+    unfinished: [],
   })
   const before = (await ask('project/view', {}))!
   const kept = await ask('assess/findings', {})
