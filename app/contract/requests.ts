@@ -94,6 +94,7 @@ export const requests = {
     ...gives<ExportedView>(),
     writes: false,
   },
+  'exchange/readings': { takes: v.strictObject({ to: path }), ...gives<{ written: string[] }>(), writes: false },
   'exchange/log': { takes: v.strictObject({ from: path }), ...gives<ImportedView>(), writes: true },
 
   'report/preview': { takes: reportOptions, ...gives<PdfView>(), writes: false },

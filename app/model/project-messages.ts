@@ -65,6 +65,11 @@ export const projectMessages = {
     kept: NOTHING_WRITTEN,
     todo: () => 'Choose one of the register.',
   },
+  'rounds.none': {
+    what: () => 'There is no accepted round yet.',
+    kept: NOTHING_WRITTEN,
+    todo: () => 'Accept a round in Log first.',
+  },
   'round.draft': {
     what: (p) => `Round ${shown(p.value)} is a draft: it is not accepted yet.`,
     kept: NOTHING_WRITTEN,

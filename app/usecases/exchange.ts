@@ -6,6 +6,7 @@ import { Fault, faultsOf, InputFault, type FaultRecord } from '../model/faults.t
 import { readBuilding } from '../model/read-building.ts'
 import { readReadings } from '../model/read-readings.ts'
 import { writeBuilding } from '../model/write-building.ts'
+import { writeReadings } from '../model/write-readings.ts'
 import type { Context, ReadStore, WriteStore } from './ports.ts'
 import { open } from './project.ts'
 import { openProject } from './project-view.ts'
@@ -49,6 +50,23 @@ export function exportBuilding({ to, replace }: { to: string; replace?: boolean 
   else writeNew(context, to, text)
   const drafts = read.rounds().flatMap((r) => (r.state === 'draft' ? [r.id] : []))
   return { written: to, drafts, unfinished: unfinishedIn(text) }
+}
+
+/**
+ * The accepted rounds as readings tables. Level books and given levels have columns of their own: where the project has
+ * both, the levels go to a second table beside the first.
+ */
+export function exportReadings({ to }: { to: string }, context: Context): { written: string[] } {
+  const { levels, books } = writeReadings(openProject(context).read.building().survey.rounds)
+  if (levels === undefined && books === undefined) throw new Fault('rounds.none')
+  const beside = to.replace(/(\.[^./\\]*)?$/, ', levels$1')
+  const tables: [string, string][] = []
+  if (books !== undefined) tables.push([to, books])
+  if (levels !== undefined) tables.push([books === undefined ? to : beside, levels])
+  for (const [path] of tables) if (context.files.exists(path)) throw new Fault('file.exists', { file: path })
+  // With a mark of its encoding, as spreadsheets want it.
+  for (const [path, text] of tables) writeNew(context, path, `\ufeff${text}`)
+  return { written: tables.map(([path]) => path) }
 }
 
 function unfinishedIn(text: string): FaultRecord[] {

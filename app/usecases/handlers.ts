@@ -8,7 +8,7 @@ import type { Envelope } from '../contract/wire.ts'
 import { Fault, faultsOf } from '../model/faults.ts'
 import { findings, verify } from './assess-round.ts'
 import { edit } from './describe.ts'
-import { exportBuilding, importBuilding, logReadings } from './exchange.ts'
+import { exportBuilding, exportReadings, importBuilding, logReadings } from './exchange.ts'
 import type { Context, WriteStore } from './ports.ts'
 import {
   aboutView,
@@ -54,6 +54,7 @@ const handlers: Handlers = {
   'assess/findings': findings,
   'exchange/import': importBuilding,
   'exchange/export': exportBuilding,
+  'exchange/readings': exportReadings,
   'exchange/log': logReadings,
   'report/preview': preview,
   'report/issue': issue,

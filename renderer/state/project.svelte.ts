@@ -78,6 +78,11 @@ export class ProjectState {
     return (await call('exchange/export', { to })).drafts
   }
 
+  /** Writes the accepted rounds as readings tables; gives where. */
+  async exportReadings(to: string): Promise<string[]> {
+    return (await call('exchange/readings', { to })).written
+  }
+
   /** Adds the rounds of a readings table. */
   async log(from: string): Promise<ImportedView> {
     const added = await this.#work.run('Reading the table', (following) => call('exchange/log', { from }, following))

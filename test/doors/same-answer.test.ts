@@ -71,6 +71,8 @@ const LIST: readonly (readonly [name: RequestName | 'no/such' | 'constructor', i
   ['report/pdf', { number: 9 }],
   ['report/save', { number: 1, to: 'HERE/one.pdf' }],
   ['exchange/export', { to: 'HERE/x.building.json' }],
+  ['exchange/readings', { to: 'HERE/out.csv' }],
+  ['exchange/readings', { to: 'HERE/out.csv' }],
   ['exchange/log', { from: 'HERE/none.csv' }],
   ['exchange/log', { from: 'HERE/visit.csv' }],
   ['project/duplicate', { path: 'HERE/copy.levelstead' }],

@@ -2,8 +2,9 @@
 import { existsSync, readFileSync, readdirSync, writeFileSync } from 'node:fs'
 import { dirname } from 'node:path'
 import { describe, expect, it, test } from 'vitest'
-import type { Building } from '../../../app/model/building.ts'
 import { moveSupport } from '../../../app/model/edits/supports.ts'
+import type { Building, Round } from '../../../app/model/building.ts'
+import { readReadings } from '../../../app/model/read-readings.ts'
 import { writeBuilding } from '../../../app/model/write-building.ts'
 import { desk } from '../../support/desk.ts'
 import { disagreements } from '../../support/disagreements.ts'
@@ -112,6 +113,34 @@ describe('a building file', () => {
     })
     const { unfinished } = await ask('exchange/export', { to: at('p.json') })
     expect(unfinished.map((fault) => fault.code)).toEqual(['line.unsupported'])
+  })
+})
+
+describe('the readings of a project', () => {
+  it('come out as tables that another project takes back: books in one, given levels in another beside it', async () => {
+    const { ask, at } = desk()
+    await ask('project/example', { path: at('example.levelstead') })
+    const levels = [{ point: 'S-A1', level_m: 42.7, sd_mm: 0.3 }]
+    await ask('rounds/draft', { id: 'R7', date: '2026-12-14', levels })
+    await ask('rounds/accept', { round: 'R7' })
+    const { building } = (await ask('project/view', {}))!
+    const { written } = await ask('exchange/readings', { to: at('visits.csv') })
+    expect(written).toEqual([at('visits.csv'), at('visits, levels.csv')])
+    const bare = { ...building, survey: { points: building.survey.points, rounds: [] } }
+    const [books, given] = written.map((path) => readReadings(readFileSync(path), bare, path).rounds)
+    const rows = (rounds: readonly Round[]) =>
+      rounds.map(({ id, date, book, levels }) => [id, date, book?.rows ?? levels])
+    expect(rows(books!)).toEqual(rows(building.survey.rounds.slice(0, 7)))
+    expect(rows(given!)).toEqual([['R7', '2026-12-14', levels]])
+  })
+
+  it('are not written where there are none, nor over anything', async () => {
+    const { ask, at, refused } = desk()
+    await ask('project/new', { path: at('p.levelstead'), name: 'Store' })
+    expect((await refused('exchange/readings', { to: at('r.csv') }))[0]!.code).toBe('rounds.none')
+    await ask('project/example', { path: at('x.levelstead') })
+    await ask('exchange/readings', { to: at('r.csv') })
+    expect((await refused('exchange/readings', { to: at('r.csv') }))[0]!.code).toBe('file.exists')
   })
 })
 
