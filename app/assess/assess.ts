@@ -17,7 +17,7 @@ import { lineMovement, sdOf, spanFindings, stretchFindings, weigh, type LineMove
 import type { LevelledRound } from './levels.ts'
 import { lineMoments, memberFindings, respondedValue, type LineMoments } from './members.ts'
 import { levelled, prepare, type Prepared } from './prepare.ts'
-import { settlementsOf, type Settlements } from './settlement.ts'
+import { settlementsOf, type Settlements, type StudsApart } from './settlement.ts'
 
 /** Findings of all rounds but the baseline, by date; of one round where it is named. */
 export function assessBuilding(building: Building, round?: string): Findings {
@@ -131,7 +131,10 @@ function byDate(rounds: readonly Round[]): Round[] {
   return [...rounds].sort((a, b) => (a.date < b.date ? -1 : a.date > b.date ? 1 : 0))
 }
 
-function supportFindings(prepared: Prepared, { value, factor, q, estimatedFrom }: Settlements): SupportFinding[] {
+function supportFindings(
+  prepared: Prepared,
+  { value, factor, q, estimatedFrom, apart }: Settlements,
+): SupportFinding[] {
   return prepared.building.supports.map((support, i): SupportFinding => {
     const sd = sdOf(factor.subarray(i * q, (i + 1) * q))
     const from = estimatedFrom[i]
@@ -142,8 +145,15 @@ function supportFindings(prepared: Prepared, { value, factor, q, estimatedFrom }
       estimated: from !== undefined,
       significant: Math.abs(value[i]!) > prepared.z * sd,
       ...(from === undefined ? {} : { estimated_from: from }),
+      ...disagreement(apart[i], prepared.z),
     }
   })
+}
+
+function disagreement(apart: StudsApart | undefined, z: number): Pick<SupportFinding, 'studs_disagree'> {
+  if (!apart || Math.abs(apart.difference) <= z * apart.sd) return {}
+  const { studs, difference, sd } = apart
+  return { studs_disagree: { studs, difference_mm: difference * 1000, sd_mm: sd * 1000 } }
 }
 
 function tiltOf(settlements: Settlements): RoundFindings['tilt'] {

@@ -14,15 +14,26 @@
 import type { Building } from '../model/building.ts'
 import { Fault } from '../model/faults.ts'
 import { planeAt, planeMap, tiltAlong, type PlaneMap } from '../../solver/index.ts'
+import {
+  allowance,
+  combine,
+  factorOf,
+  levelOf,
+  valueOf,
+  varianceOf,
+  weightedMean,
+  type Functional,
+} from './functional.ts'
 import type { LevelledRound } from './levels.ts'
 
 /** Least standard deviation allowed for what an estimate cannot know, m. */
 export const ALLOWANCE = 0.002
 
-/** Weight of each level, by round and row, and of each allowance in force. */
-interface Functional {
-  levels: Map<LevelledRound, Map<number, number>>
-  allowances: Map<string, { weight: number; sd: number }>
+/** Two studs of one support, and by how much more the first has settled, m. */
+export interface StudsApart {
+  studs: [string, string]
+  difference: number
+  sd: number
 }
 
 export interface Settlements {
@@ -34,6 +45,8 @@ export interface Settlements {
   q: number
   /** What the estimate of a support rests on; undefined where it was measured. */
   estimatedFrom: (string | undefined)[]
+  /** Of a support with several studs: the two that differ most for what the survey can tell. */
+  apart: (StudsApart | undefined)[]
   plane: PlaneMap
   /** Weights over all n supports; 0 for those not measured. */
   mean: Float64Array
@@ -62,10 +75,12 @@ function settle(source: SettlementSource, round: LevelledRound, memo: Settlement
   const { supports } = source.building
   const functionals: (Functional | undefined)[] = []
   const estimatedFrom: (string | undefined)[] = []
+  const apart: (StudsApart | undefined)[] = []
   supports.forEach((support) => {
     const own = bySeries(source, round, support.id, memo)
     functionals.push(own?.functional)
     estimatedFrom.push(own?.restsOn)
+    apart.push(own?.apart)
   })
   const measured = supports.flatMap((_, i) => (functionals[i] && estimatedFrom[i] === undefined ? [i] : []))
   if (measured.length === 0)
@@ -88,6 +103,7 @@ function settle(source: SettlementSource, round: LevelledRound, memo: Settlement
     factor,
     q,
     estimatedFrom,
+    apart,
     plane,
     mean: spread(plane.mean, measured, supports.length),
     tiltX: spread(plane.tiltX, measured, supports.length),
@@ -115,8 +131,9 @@ function bySeries(
   round: LevelledRound,
   support: string,
   memo: SettlementMemo,
-): { functional: Functional; restsOn?: string } | undefined {
+): { functional: Functional; restsOn?: string; apart?: StudsApart } | undefined {
   const sound: Functional[] = []
+  const names: string[] = []
   const doubtful: { functional: Functional; restsOn: string }[] = []
   const index = source.building.supports.findIndex((s) => s.id === support)
   for (const stud of source.building.survey.points) {
@@ -126,6 +143,7 @@ function bySeries(
     const first = source.baseline.row.get(stud.id)
     if (first !== undefined) {
       sound.push(combine([[1, levelOf(source.baseline, first)], [-1, levelOf(round, row)]])) // prettier-ignore
+      names.push(stud.id)
       continue
     }
     const join = joinOf(source, stud.id)
@@ -136,20 +154,37 @@ function bySeries(
       [1, levelOf(join, join.row.get(stud.id)!)],
       [-1, levelOf(round, row)],
     ])
-    if (there.estimatedFrom[index] === undefined) sound.push(functional)
-    else
+    if (there.estimatedFrom[index] === undefined) {
+      sound.push(functional)
+      names.push(stud.id)
+    } else
       doubtful.push({
         functional,
         restsOn: `stud ${stud.id}, joined in round ${join.id} to an estimate (${there.estimatedFrom[index]})`,
       })
   }
-  if (sound.length) return { functional: weightedMean(sound) }
+  if (sound.length) return { functional: weightedMean(sound), apart: farthest(sound, names) }
   if (doubtful.length)
     return {
       functional: weightedMean(doubtful.map((d) => d.functional)),
       restsOn: doubtful.map((d) => d.restsOn).join('; '),
     }
   return undefined
+}
+
+/** The pair of studs that differ most, by the standard deviation of their difference. */
+function farthest(sound: readonly Functional[], names: readonly string[]): StudsApart | undefined {
+  let worst: StudsApart | undefined
+  sound.forEach((a, i) =>
+    sound.slice(i + 1).forEach((b, k) => {
+      const between = combine([[1, a], [-1, b]]) // prettier-ignore
+      const difference = valueOf(between)
+      const sd = Math.sqrt(varianceOf(between))
+      if (!worst || Math.abs(difference) * worst.sd > Math.abs(worst.difference) * sd)
+        worst = { studs: [names[i]!, names[i + 1 + k]!], difference, sd }
+    }),
+  )
+  return worst
 }
 
 /** The round at which a stud that the baseline does not have joins: the first after it, else the last before. */
@@ -237,69 +272,4 @@ function bracket(building: Building, index: number, measured: readonly number[])
 function isCloser(a: Bracket & { width: number }, b: Bracket & { width: number }): boolean {
   const isBetween = a.to !== undefined
   return isBetween === (b.to !== undefined) ? a.width < b.width : isBetween
-}
-
-function levelOf(round: LevelledRound, row: number): Functional {
-  return { levels: new Map([[round, new Map([[row, 1]])]]), allowances: new Map() }
-}
-
-function allowance(key: string, sd: number): Functional {
-  return { levels: new Map(), allowances: new Map([[key, { weight: 1, sd }]]) }
-}
-
-function combine(terms: readonly (readonly [number, Functional])[]): Functional {
-  const out: Functional = { levels: new Map(), allowances: new Map() }
-  for (const [weight, term] of terms) {
-    for (const [round, rows] of term.levels) {
-      let into = out.levels.get(round)
-      if (!into) out.levels.set(round, (into = new Map()))
-      for (const [row, w] of rows) into.set(row, (into.get(row) ?? 0) + weight * w)
-    }
-    for (const [key, a] of term.allowances)
-      out.allowances.set(key, { sd: a.sd, weight: (out.allowances.get(key)?.weight ?? 0) + weight * a.weight })
-  }
-  return out
-}
-
-function valueOf(f: Functional): number {
-  let sum = 0
-  for (const [round, rows] of f.levels) for (const [row, w] of rows) sum += w * round.level[row]!
-  return sum
-}
-
-function varianceOf(f: Functional): number {
-  return factorOf([f]).factor.reduce((sum, x) => sum + x * x, 0)
-}
-
-function weightedMean(of: readonly Functional[]): Functional {
-  if (of.length === 1) return of[0]!
-  const variances = of.map(varianceOf)
-  // Given levels may be stated as free of error; such studs share alike.
-  const weights = variances.some((v) => v === 0) ? variances.map((v) => (v === 0 ? 1 : 0)) : variances.map((v) => 1 / v)
-  const sum = weights.reduce((a, b) => a + b, 0)
-  return combine(of.map((f, i) => [weights[i]! / sum, f]))
-}
-
-/** The functionals as one factor over all rounds and allowances involved. */
-function factorOf(functionals: readonly Functional[]): { factor: Float64Array; q: number } {
-  const column = new Map<LevelledRound | string, number>()
-  let q = 0
-  for (const f of functionals) {
-    for (const round of f.levels.keys())
-      if (!column.has(round)) {
-        column.set(round, q)
-        q += round.q
-      }
-    for (const key of f.allowances.keys()) if (!column.has(key)) column.set(key, q++)
-  }
-  const factor = new Float64Array(functionals.length * q)
-  functionals.forEach((f, i) => {
-    for (const [round, rows] of f.levels) {
-      const begin = i * q + column.get(round)!
-      for (const [row, w] of rows)
-        for (let k = 0; k < round.q; k++) factor[begin + k]! += w * round.factor[row * round.q + k]!
-    }
-    for (const [key, a] of f.allowances) factor[i * q + column.get(key)!] = a.weight * a.sd
-  })
-  return { factor, q }
 }

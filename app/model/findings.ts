@@ -22,6 +22,8 @@ export interface SupportFinding {
   significant: boolean
   /** With `estimated`: what the estimate rests on, in words. */
   estimated_from?: string
+  /** Of a support with several studs: those two differ by more than the survey's uncertainty. */
+  studs_disagree?: { studs: [string, string]; difference_mm: number; sd_mm: number }
 }
 
 export interface SpanFinding {

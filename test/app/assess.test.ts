@@ -170,6 +170,28 @@ describe('a stud that was lost and replaced', () => {
   })
 })
 
+describe('two studs on one support', () => {
+  function pair(difference_mm: number) {
+    const building = given([{ id: 'R0', mm: ZERO }, { id: 'R1', mm: ZERO }]) // prettier-ignore
+    building.survey.points.push({ id: 'S-B2b', kind: 'stud', support: 'B2' })
+    building.survey.rounds.forEach((round, r) =>
+      round.levels!.push({ point: 'S-B2b', level_m: 41 - (r * difference_mm) / 1000, sd_mm: 0.2 }),
+    )
+    return last(building).supports.find((s) => s.support === 'B2')!
+  }
+
+  it('are averaged by their weights, and said to disagree only beyond what the survey can tell', () => {
+    expect(pair(0.4)).toMatchObject({ settlement_mm: expect.closeTo(0.2, 9), sd_mm: expect.closeTo(0.2, 9) })
+    // Each settlement has 0.2 sqrt 2 mm, their difference 0.4 mm: 95 % is 0.78 mm.
+    expect(pair(0.7).studs_disagree).toBeUndefined()
+    expect(pair(0.9).studs_disagree).toEqual({
+      studs: ['S-B2', 'S-B2b'],
+      difference_mm: expect.closeTo(-0.9, 9),
+      sd_mm: expect.closeTo(0.4, 9),
+    })
+  })
+})
+
 describe('a level book that scatters', () => {
   /** The example's last book with one change point's foresight off by so much. */
   function off(mm: number) {

@@ -67,6 +67,12 @@ export function howSure(input: ReportInput): Content[] {
       `The standard deviation of a support's settlement is ${millimetres(Math.min(...measuredSds), 2)} to ${millimetres(worst, 2)} mm. At ${percent} % confidence this visit can show a settlement of ${millimetres(z * worst, 1)} mm; ${significant} of ${measuredSds.length} measured supports have moved by more than their own limit.`,
     )
   }
+  for (const { support, studs_disagree: apart } of findings.supports)
+    if (apart)
+      paragraphs.push(
+        `The studs of support ${support} disagree: ${apart.studs[0]} has settled ${millimetres(apart.difference_mm)} ± ${millimetres(z * apart.sd_mm)} mm more than ${apart.studs[1]}. One of them may have been disturbed; their mean was taken.`,
+      )
+  if (measuredSds.length) paragraphs.push(repeatSentence(z * Math.max(...measuredSds)))
   paragraphs.push(...levellingSentences(findings.levelling, percent))
   if (input.round.book) paragraphs.push(...bookView(building, input.round).hints)
   paragraphs.push(
@@ -84,6 +90,11 @@ export function howSure(input: ReportInput): Content[] {
     ...paragraphs.map((text): Content => ({ text, style: 'body' })),
     ...misclosures(findings.levelling),
   ]
+}
+
+/** How often the book would have to be run for half of what it can show now: repeats average the scatter out. */
+function repeatSentence(shows_mm: number): string {
+  return `Run four times over and averaged, in both visits, the same book would show half of that, ${millimetres(shows_mm / 2, 1)} mm.`
 }
 
 function levellingSentences(levelling: Levelling | undefined, percent: number): string[] {
