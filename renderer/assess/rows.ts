@@ -1,7 +1,7 @@
 /** Rows of the ledger, worst first, as they are shown: text apart from layout. */
 import { headroomOf } from '../../app/assess/headroom.ts'
 import type { Prepared } from '../../app/assess/prepare.ts'
-import type { Rate, Series } from '../../app/assess/series.ts'
+import { reachedOn, type Rate, type Series } from '../../app/assess/series.ts'
 import type { Target } from '../../app/drawing/scene.ts'
 import {
   byWorst,
@@ -13,6 +13,7 @@ import {
   type Triggered,
 } from '../../app/model/findings.ts'
 import { fixed, millimetres, momentWithInterval, percent, ratio } from '../../app/model/numbers.ts'
+import { shortDate } from '../strip/dates.ts'
 
 export interface LedgerRow {
   target: Target
@@ -39,21 +40,29 @@ export type LedgerTab = 'members' | 'spans' | 'supports' | 'headroom'
 export type LedgerPage = LedgerTab | 'trend'
 
 export const COLUMNS: Record<LedgerTab, LedgerColumns> = {
-  supports: { name: 'support', value: 'settlement mm', share: '', remark: '' },
-  spans: { name: 'span', value: 'distortion', share: 'differential mm', remark: 'certainty' },
-  members: { name: 'member', value: 'induced kNm', share: 'of capacity', remark: 'certainty' },
-  headroom: { name: 'support', value: 'mm to amber', share: 'mm to red', remark: 'first to reach red' },
+  supports: { name: 'support', value: 'settlement, mm', share: 'since last, mm', remark: '' },
+  spans: { name: 'span', value: 'distortion', share: 'differs, mm', remark: 'certainty' },
+  members: { name: 'member', value: 'induced, kNm', share: 'of capacity', remark: 'certainty' },
+  headroom: { name: 'support', value: 'to amber, mm', share: 'to red, mm', remark: 'first red' },
 }
 
-export function ledgerRows(tab: LedgerTab, findings: RoundFindings, prepared: Prepared): LedgerRow[] {
+/** `rounds` are all visits by date; what changed since the last one is counted from the one before. */
+export function ledgerRows(
+  tab: LedgerTab,
+  findings: RoundFindings,
+  prepared: Prepared,
+  rounds: readonly RoundFindings[] = [],
+): LedgerRow[] {
   const { z } = prepared
-  if (tab === 'supports') return supportRows(findings, z)
+  if (tab === 'supports') return supportRows(findings, z, rounds.filter((r) => r.date < findings.date).at(-1))
   if (tab === 'spans') return spanRows(findings, z)
   if (tab === 'members') return memberRows(findings, z)
   return headroomRows(findings, prepared)
 }
 
-function supportRows(findings: RoundFindings, z: number): LedgerRow[] {
+/** Without a visit between, the last one was the baseline, where all stood at nothing. */
+function supportRows(findings: RoundFindings, z: number, last: RoundFindings | undefined): LedgerRow[] {
+  const before = new Map(last?.supports.map((s) => [s.support, s.settlement_mm]))
   return [...findings.supports]
     .sort((a, b) => b.settlement_mm - a.settlement_mm)
     .map((s) => ({
@@ -61,9 +70,14 @@ function supportRows(findings: RoundFindings, z: number): LedgerRow[] {
       name: s.support,
       value: millimetres(s.settlement_mm),
       interval: millimetres(z * s.sd_mm),
-      share: '',
+      share: signed(s.settlement_mm - (before.get(s.support) ?? 0)),
       remark: s.estimated ? 'estimated, not measured' : s.significant ? 'has moved' : 'within the noise',
     }))
+}
+
+function signed(mm: number): string {
+  const words = millimetres(mm)
+  return Number(mm.toFixed(1)) > 0 ? `+${words}` : words
 }
 
 function spanRows(findings: RoundFindings, z: number): LedgerRow[] {
@@ -142,6 +156,16 @@ function nameOf(target: Triggered): string {
 
 /** Days in a month, on average. */
 const MONTH = 30.44
+
+/** When it would be at a trigger if it went on, and how soon that may be with the uncertainty of the rate. */
+export function reachText(status: 'amber' | 'red', rate: Rate, trigger: number, z: number): string | undefined {
+  const day = reachedOn(rate, trigger)
+  const { line } = rate
+  const soonest = reachedOn({ ...rate, line: { ...line, rate: line.rate + z * line.sdRate } }, trigger)
+  if (day === undefined) return undefined
+  const atEarliest = soonest === undefined || soonest === day ? '' : `, at the earliest ${shortDate(soonest)}`
+  return `${status} about ${shortDate(day)}${atEarliest}`
+}
 
 /** A rate by the month, with its interval, in the words of its quantity. */
 export function rateText(quantity: Series['quantity'], { perDay, sdPerDay }: Rate, z: number): string {

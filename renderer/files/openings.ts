@@ -54,7 +54,7 @@ export async function openExample(project: Project, chooser: Chooser): Promise<v
 
 /** A name as a file may have it on any system. */
 export function fileName(name: string): string {
-  return name.replace(/[\\/:*?"<>|]+/g, ' ').trim()
+  return name.replace(/[\\/:*?"<>|\s]+/g, ' ').trim()
 }
 
 function baseName(path: string): string {

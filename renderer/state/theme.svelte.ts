@@ -1,17 +1,22 @@
-/** The drawing's theme, following the system. */
+/** The drawing's theme, following the system; on paper it is always that of paper. */
+import { flushSync } from 'svelte'
 import { darkTheme, lightTheme, type Theme } from '../../app/drawing/theme.ts'
 import { contextOf } from './context.ts'
 
 export class ThemeState {
   #dark = $state(false)
+  #printing = $state(false)
 
   constructor(query: MediaQueryList = matchMedia('(prefers-color-scheme: dark)')) {
     this.#dark = query.matches
     query.addEventListener('change', () => (this.#dark = query.matches))
+    // The page is laid out for print as soon as these have been heard.
+    addEventListener('beforeprint', () => flushSync(() => (this.#printing = true)))
+    addEventListener('afterprint', () => (this.#printing = false))
   }
 
   get drawing(): Theme {
-    return this.#dark ? darkTheme : lightTheme
+    return this.#dark && !this.#printing ? darkTheme : lightTheme
   }
 }
 
