@@ -13,7 +13,7 @@ import {
   type Triggered,
 } from '../../app/model/findings.ts'
 import { fixed, millimetres, momentWithInterval, percent, ratio } from '../../app/model/numbers.ts'
-import { shortDate } from '../strip/dates.ts'
+import { reckonedDate } from '../strip/dates.ts'
 
 export interface LedgerRow {
   target: Target
@@ -163,8 +163,9 @@ export function reachText(status: 'amber' | 'red', rate: Rate, trigger: number, 
   const { line } = rate
   const soonest = reachedOn({ ...rate, line: { ...line, rate: line.rate + z * line.sdRate } }, trigger)
   if (day === undefined) return undefined
-  const atEarliest = soonest === undefined || soonest === day ? '' : `, at the earliest ${shortDate(soonest)}`
-  return `${status} about ${shortDate(day)}${atEarliest}`
+  const about = reckonedDate(day, rate.to)
+  const earliest = soonest === undefined ? about : reckonedDate(soonest, rate.to)
+  return `${status} about ${about}${earliest === about ? '' : `, at the earliest ${earliest}`}`
 }
 
 /** A rate by the month, with its interval, in the words of its quantity. */

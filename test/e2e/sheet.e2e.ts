@@ -90,7 +90,10 @@ describe('the drawing', () => {
 
   it('keeps within the window where the system shows texts at twice their size', async () => {
     const view = await house.open()
-    await view.evaluate(() => (document.documentElement.style.fontSize = '28px'))
+    // As somebody has set it in the browser: places are laid out by it, too.
+    const devtools = await view.context().newCDPSession(view)
+    await devtools.send('Page.setFontSizes', { fontSizes: { standard: 32 } })
+    await expect.poll(() => view.evaluate(() => getComputedStyle(document.body).fontSize)).toBe('28px')
     for (const place of ['Describe', 'Log', 'Assess', 'Issue']) {
       await view.getByRole('button', { name: place, exact: true }).click()
       await view.waitForTimeout(300)
@@ -98,7 +101,7 @@ describe('the drawing', () => {
         () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
       )
       expect([place, beyond]).toEqual([place, 0])
-      await view.screenshot({ path: `test/.out/${place}-texts-200.png` })
+      await view.screenshot({ path: `test/.out/${place}-texts-200.png`, fullPage: true })
     }
     await view.context().close()
   })
