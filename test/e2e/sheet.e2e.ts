@@ -61,6 +61,11 @@ describe('the drawing', () => {
     const [wide, whole, left] = await sheet.evaluate((e) => [e.clientWidth, e.scrollWidth, e.scrollLeft])
     expect(whole! / wide!).toBeCloseTo(2, 1)
     expect((left! + wide! / 2) / whole!).toBeCloseTo(0.5, 1)
+    await page.getByRole('button', { name: 'larger sheet' }).click()
+    await page.getByRole('row', { name: /^red A4-B4\/2/ }).click()
+    const beam = page.locator('.sheet svg line[stroke="#b4241c"]').first()
+    await expect.poll(() => beam.evaluate(isInSight)).toBe(true)
+    await page.getByRole('row', { name: /^amber CC4\/3/ }).click()
     await sheet.focus()
     await press(page, '0')
     await expect.poll(() => sheet.evaluate((e) => e.scrollWidth - e.clientWidth)).toBe(0)
@@ -93,6 +98,7 @@ describe('the drawing', () => {
     // As somebody has set it in the browser: places are laid out by it, too.
     const devtools = await view.context().newCDPSession(view)
     await devtools.send('Page.setFontSizes', { fontSizes: { standard: 32 } })
+    await view.reload()
     await expect.poll(() => view.evaluate(() => getComputedStyle(document.body).fontSize)).toBe('28px')
     for (const place of ['Describe', 'Log', 'Assess', 'Issue']) {
       await view.getByRole('button', { name: place, exact: true }).click()
@@ -101,7 +107,7 @@ describe('the drawing', () => {
         () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
       )
       expect([place, beyond]).toEqual([place, 0])
-      await view.screenshot({ path: `test/.out/${place}-texts-200.png`, fullPage: true })
+      await view.screenshot({ path: `test/.out/${place}-texts-200.png` })
     }
     await view.context().close()
   })
@@ -110,3 +116,10 @@ describe('the drawing', () => {
     expect(house.complaints).toEqual([])
   })
 })
+
+/** Whether the middle of an element lies within the part of its sheet that is seen. */
+function isInSight(element: Element): boolean {
+  const [own, seen] = [element.getBoundingClientRect(), element.closest('.sheet')!.getBoundingClientRect()]
+  const [x, y] = [own.x + own.width / 2, own.y + own.height / 2]
+  return x >= seen.left && x <= seen.right && y >= seen.top && y <= seen.bottom
+}
