@@ -2,6 +2,7 @@
 import { APPLICATION_ID, type Connection } from './connection.ts'
 import { up as first } from './migrations/0010-first.ts'
 import { up as replace } from './migrations/0020-replace.ts'
+import { up as released } from './migrations/0030-released.ts'
 
 export interface Step {
   number: number
@@ -11,6 +12,7 @@ export interface Step {
 export const STEPS: readonly Step[] = [
   { number: 10, up: first },
   { number: 20, up: replace },
+  { number: 30, up: released },
 ]
 
 /** The schema that this version writes. */

@@ -10,7 +10,7 @@ export const COLUMNS = {
   frame_line: 'id',
   node: 'id, x_m, z_m, support, base, load_kN',
   member: 'id, kind, from_node AS "from", to_node AS "to", section, pin_from, pin_to, loads, capacity',
-  point: 'id, kind, level_m, support',
+  point: 'id, kind, level_m, support, released',
 }
 
 /** The entity without the keys that are NULL; JSON columns are parsed, 0 and 1 of the named columns are truth values. */
@@ -105,6 +105,6 @@ export function memberRow(m: Member): Row {
 
 export function pointRow(p: SurveyPoint): Row {
   return p.kind === 'benchmark'
-    ? { id: p.id, kind: p.kind, level_m: p.level_m, support: null }
-    : { id: p.id, kind: p.kind, level_m: null, support: p.support }
+    ? { id: p.id, kind: p.kind, level_m: p.level_m, support: null, released: p.released ?? null }
+    : { id: p.id, kind: p.kind, level_m: null, support: p.support, released: null }
 }

@@ -2,7 +2,7 @@
  * The levels of one round with their full covariance: from a level book by adjustment, or as given. The
  * covariance is carried as a factor F with C = F F', so that a variance that is zero by theory comes out as zero.
  */
-import type { Building, LevelBook, Round } from '../model/building.ts'
+import { heldBenchmarks, type Building, type LevelBook, type Round } from '../model/building.ts'
 import { Fault } from '../model/faults.ts'
 import type { Levelling } from '../model/findings.ts'
 import {
@@ -43,9 +43,7 @@ export interface NumberedBook {
 }
 
 export function numberBook(book: Pick<LevelBook, 'rows'>, building: Pick<Building, 'survey'>): NumberedBook {
-  const benchmark = new Map(
-    building.survey.points.flatMap((p): [string, number][] => (p.kind === 'benchmark' ? [[p.id, p.level_m]] : [])),
-  )
+  const benchmark = new Map(heldBenchmarks(building).map((b): [string, number] => [b.id, b.level_m]))
   const number = new Map<string, number>()
   const lines = book.rows.map((row): BookLine => {
     if (!number.has(row.point)) number.set(row.point, number.size)

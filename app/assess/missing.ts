@@ -3,7 +3,7 @@
  * place where it is mended. It looks at the description as a whole; what is wrong with a single value is told
  * where the value is typed.
  */
-import { capacityOf, type Building, type Member, type Round } from '../model/building.ts'
+import { capacityOf, heldBenchmarks, type Building, type Member, type Round } from '../model/building.ts'
 import type { ElementRef } from '../model/faults.ts'
 
 /** Part of the place in which the thing is given. */
@@ -56,7 +56,7 @@ function survey(building: Building, drafts: readonly Pick<Round, 'id'>[]): Missi
       found.push(advised('points', text, { kind: 'support', id: bare[0]! }))
     }
     const given = rounds.some((round) => round.levels)
-    if (!given && !points.some((point) => point.kind === 'benchmark'))
+    if (!given && heldBenchmarks(building).length === 0)
       found.push(advised('points', 'There is no benchmark: a level book needs one, given levels do not.'))
   }
   if (studs.length === 0) return found

@@ -3,7 +3,15 @@
  * response to each base and to the loads, spans, columns that stand in two lines. Made once a description;
  * what has not changed since a previous preparation is taken over, so that typing a reading factorises nothing.
  */
-import { capacityOf, criteriaOf, type Building, type Criteria, type FrameLine, type Round } from '../model/building.ts'
+import {
+  capacityOf,
+  criteriaOf,
+  heldBenchmarks,
+  type Building,
+  type Criteria,
+  type FrameLine,
+  type Round,
+} from '../model/building.ts'
 import { Fault, InputFault, type FaultRecord } from '../model/faults.ts'
 import {
   baseInfluence,
@@ -182,7 +190,7 @@ export function levelled(prepared: Prepared, round: Round): LevelledRound {
 }
 
 function keyOf(building: Building, criteria: Criteria, round: Round): string {
-  const benchmarks = round.book ? building.survey.points.filter((p) => p.kind === 'benchmark') : []
+  const benchmarks = round.book ? heldBenchmarks(building) : []
   return JSON.stringify([round, benchmarks, criteria.confidence])
 }
 

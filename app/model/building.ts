@@ -78,6 +78,8 @@ export interface Benchmark {
   id: string
   kind: 'benchmark'
   level_m: number
+  /** Why it is held no more (it moved, it is doubted): then it is levelled like any other point, in every round. */
+  released?: string
 }
 
 export interface Stud {
@@ -202,6 +204,11 @@ export function capacityOf(member: Pick<Member, 'capacity'>, section: Pick<Secti
   if (capacity.hogging_kNm === undefined && capacity.sagging_kNm !== undefined)
     capacity.hogging_kNm = capacity.sagging_kNm
   return capacity
+}
+
+/** The benchmarks that levels are held at. */
+export function heldBenchmarks({ survey }: Pick<Building, 'survey'>): Benchmark[] {
+  return survey.points.filter((p): p is Benchmark => p.kind === 'benchmark' && p.released === undefined)
 }
 
 /** A building with a name and nothing in it yet. */

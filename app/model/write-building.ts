@@ -8,7 +8,7 @@ const ORDER = [
   ...['format', 'version', 'name', 'reference', 'client', 'address', 'notes'],
   ...['supports', 'sections', 'frame_lines', 'survey', 'criteria'],
   ...['id', 'date', 'point', 'kind', 'from', 'to', 'section', 'support', 'material'],
-  ...['x_m', 'y_m', 'z_m', 'base_m', 'base', 'load_kN', 'level_m', 'sd_mm'],
+  ...['x_m', 'y_m', 'z_m', 'base_m', 'base', 'load_kN', 'level_m', 'sd_mm', 'released'],
   ...['E_GPa', 'I_cm4', 'A_cm2', 'shear_area_cm2', 'G_over_E', 'stiffness_factor'],
   ...['pin_from', 'pin_to', 'loads', 'capacity', 'sagging_kNm', 'hogging_kNm', 'shear_kN'],
   ...['kN_per_m', 'kN', 'at_m', 'action', 'nodes', 'members'],

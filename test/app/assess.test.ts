@@ -211,6 +211,32 @@ describe('a level book that scatters', () => {
   })
 })
 
+describe('a benchmark that is let go', () => {
+  it('holds no level any more: what hangs on it is levelled from the other, in baseline and round alike', () => {
+    const building = exampleBuilding()
+    // The second benchmark has come down by 3 mm before the last visit: every reading taken to it shows it.
+    const rows = building.survey.rounds.at(-1)!.book!.rows
+    const bm2 = rows.find((r) => r.point === 'BM2')!
+    bm2.fore_m! += 0.003
+    bm2.back_m! += 0.003
+    const held = assessBuilding(building, 'R6').rounds[0]!
+    expect(held.levelling!.scaled).toBe(true)
+    const points = building.survey.points.map((p) => (p.id === 'BM2' ? { ...p, released: 'it moved' } : p))
+    const free = assessBuilding({ ...building, survey: { ...building.survey, points } }, 'R6').rounds[0]!
+    expect(free.levelling).toMatchObject({ scaled: false, degrees_of_freedom: 1 })
+    const truth = assessBuilding(exampleBuilding(), 'R6').rounds[0]!
+    free.supports.forEach((s, i) => {
+      expect(Math.abs(s.settlement_mm - truth.supports[i]!.settlement_mm)).toBeLessThan(0.5)
+    })
+  })
+
+  it('says in its own name when none is left to hold', () => {
+    const building = exampleBuilding()
+    for (const p of building.survey.points) if (p.kind === 'benchmark') p.released = 'doubted'
+    expect(() => assessBuilding(building, 'R6')).toThrow(/benchmark/)
+  })
+})
+
 describe('a column on two lines', () => {
   it('is used by the bending of both at the same section', () => {
     const round = last(exampleBuilding())

@@ -21,7 +21,14 @@ import {
   setSection,
   strikeOut,
 } from '../../app/model/edits/members.ts'
-import { addBenchmark, placeStuds, removePoint, renamePoint, setBenchmarkLevel } from '../../app/model/edits/points.ts'
+import {
+  addBenchmark,
+  placeStuds,
+  removePoint,
+  renamePoint,
+  setBenchmarkLevel,
+  setReleased,
+} from '../../app/model/edits/points.ts'
 import { addSection, changeSection, removeSection, renameSection } from '../../app/model/edits/sections.ts'
 import { setStoreys } from '../../app/model/edits/storeys.ts'
 import { addSupport, moveSupport, removeSupports, renameSupport } from '../../app/model/edits/supports.ts'
@@ -365,12 +372,17 @@ describe('sections, points and the rest', () => {
       placeStuds,
       (b) => addBenchmark(b, { id: 'BM1', level_m: 42.5 }),
       (b) => setBenchmarkLevel(b, 'BM1', 42.501),
+      (b) => setReleased(b, 'BM1', ' it moved '),
+      (b) => addBenchmark(b, { id: 'BM2', level_m: 42.6 }),
+      (b) => setReleased(b, 'BM2', 'in doubt'),
+      (b) => setReleased(b, 'BM2', ''),
       (b) => renamePoint(b, 'S-A2', 'S2'),
     )
     expect(building.survey.points).toEqual([
       { id: 'S-A1', kind: 'stud', support: 'A1' },
       { id: 'S2', kind: 'stud', support: 'A2' },
-      { id: 'BM1', kind: 'benchmark', level_m: 42.501 },
+      { id: 'BM1', kind: 'benchmark', level_m: 42.501, released: 'it moved' },
+      { id: 'BM2', kind: 'benchmark', level_m: 42.6 },
     ])
     expect(placeStuds(building).changes).toEqual([])
   })

@@ -2,7 +2,7 @@
 import type { Building, Stud, SurveyPoint } from '../building.ts'
 import type { Edit } from '../changes.ts'
 import { Fault } from '../faults.ts'
-import { editOf } from './difference.ts'
+import { editOf, filled } from './difference.ts'
 import { unused } from './frame-grid.ts'
 import { freeName, roundsReading } from './refs.ts'
 
@@ -39,6 +39,19 @@ export function addBenchmark(building: Building, benchmark: { id: string; level_
 export function setBenchmarkLevel(building: Building, id: string, level_m: number): Edit {
   const points = building.survey.points.map((p) => (p.id === id && p.kind === 'benchmark' ? { ...p, level_m } : p))
   return editOf(`Set level of ${id}`, building, withPoints(building, points))
+}
+
+/** Lets a benchmark go, with the reason, or holds it again where the reason is empty. */
+export function setReleased(building: Building, id: string, reason: string): Edit {
+  const released = reason.trim() === '' ? undefined : reason.trim()
+  const points = building.survey.points.map((p) =>
+    p.id === id && p.kind === 'benchmark' ? filled({ ...p, released }) : p,
+  )
+  return editOf(
+    released === undefined ? `Hold ${id} again` : `Let ${id} go: ${released}`,
+    building,
+    withPoints(building, points),
+  )
 }
 
 export function renamePoint(building: Building, id: string, name: string): Edit {

@@ -2,13 +2,15 @@
 import type { Content } from 'pdfmake/interfaces.js'
 import { bookView } from '../../assess/level-book.ts'
 import { level, millimetres } from '../../model/numbers.ts'
+import { heldBenchmarks } from '../../model/building.ts'
 import type { Levelling } from '../../model/findings.ts'
 import type { ReportInput } from '../input.ts'
 import { facts, table } from '../style.ts'
 
 export function measured(input: ReportInput): Content[] {
   const { building, round, baseline, findings } = input
-  const benchmarks = building.survey.points.filter((p) => p.kind === 'benchmark')
+  const benchmarks = heldBenchmarks(building)
+  const released = building.survey.points.flatMap((p) => (p.kind === 'benchmark' && p.released ? [p] : []))
   const estimated = findings.supports.filter((s) => s.estimated)
   const total = findings.supports.length
   const rows: [string, string][] = [
@@ -21,6 +23,7 @@ export function measured(input: ReportInput): Content[] {
       round.book ? `level book of ${round.book.rows.length} rows` : `${round.levels?.length ?? 0} given levels`,
     ],
     ['Held as fixed', benchmarks.length ? benchmarks.map((b) => b.id).join(', ') : 'no benchmark (levels were given)'],
+    ...released.map((p): [string, string] => ['Held no more', `${p.id}: ${p.released}`]),
     ['Supports measured', `${total - estimated.length} of ${total}`],
   ]
   if (estimated.length)
@@ -58,7 +61,7 @@ export function howSure(input: ReportInput): Content[] {
   const { findings, building, criteria, z } = input
   const percent = Math.round(criteria.confidence * 100)
   const measuredSds = findings.supports.filter((s) => !s.estimated).map((s) => s.sd_mm)
-  const benchmarks = building.survey.points.filter((p) => p.kind === 'benchmark').length
+  const benchmarks = heldBenchmarks(building).length
   const paragraphs: string[] = []
   if (measuredSds.length) {
     const worst = Math.max(...measuredSds)
