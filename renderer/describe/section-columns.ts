@@ -23,7 +23,7 @@ export const SECTION_COLUMNS: readonly SectionColumn[] = [
   stiffness('shear_area_cm2', 'shear area', 'cm²', false, 'rigid'),
   stiffness('stiffness_factor', 'factor on EI', undefined, false, '1'),
   strength('sagging_kNm', 'sagging', 'kNm', 'none'),
-  strength('hogging_kNm', 'hogging', 'kNm', 'as sag.'),
+  strength('hogging_kNm', 'hogging', 'kNm', 'same'),
   strength('shear_kN', 'shear', 'kN', 'none'),
 ]
 
