@@ -3,13 +3,23 @@
  * through the core.
  */
 import { ask, hasDialogs } from '../client.svelte.ts'
-import { withKind, type FileWish } from './wish.ts'
+import { folderOf, withKind, type FileWish } from './wish.ts'
 
 export class FileAsking {
   wish = $state.raw<FileWish | null>(null)
   /** The folder that was looked at last. */
-  folder?: string
+  folder: string | undefined
+  readonly #beside: () => string | undefined
   #settle: ((path: string | null) => void) | undefined
+
+  constructor(beside: () => string | undefined) {
+    this.#beside = beside
+  }
+
+  /** Where to begin: where the last file was, else beside the project that is open. */
+  get place(): string | undefined {
+    return this.folder ?? folderOf(this.#beside() ?? '')
+  }
 
   ask(wish: FileWish): Promise<string | null> {
     if (hasDialogs) return this.#askSystem(wish)
@@ -35,6 +45,7 @@ export class FileAsking {
   }
 }
 
-export function chooseFile(): FileAsking {
-  return new FileAsking()
+/** `beside` gives the path of the project that is open. */
+export function chooseFile(beside: () => string | undefined = () => undefined): FileAsking {
+  return new FileAsking(beside)
 }

@@ -13,3 +13,10 @@ export function withKind(path: string, kinds: readonly string[]): string {
   const isKnown = kinds.some((kind) => path.toLowerCase().endsWith(`.${kind}`))
   return isKnown || !kinds[0] ? path : `${path}.${kinds[0]}`
 }
+
+/** The folder that a path is in; undefined of a bare name. */
+export function folderOf(path: string): string | undefined {
+  const folder = /^(.*)[\\/][^\\/]*$/.exec(path)?.[1]
+  // The top of a disk keeps its separator.
+  return folder === '' || folder?.endsWith(':') ? path.slice(0, folder.length + 1) : folder
+}

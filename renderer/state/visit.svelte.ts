@@ -101,6 +101,10 @@ export class VisitState {
     return this.round !== null && this.round === this.#project.view?.building.survey.baseline
   }
 
+  get isDraft(): boolean {
+    return this.visits.some((v) => v.id === this.round && v.isDraft)
+  }
+
   /** Findings of all accepted rounds by date, with what is being typed in place of its own. */
   readonly all = $derived.by((): readonly RoundFindings[] => {
     const now = this.findings

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { fileName, openFile, startBuilding } from '../../renderer/files/openings.ts'
-import { withKind, type FileWish } from '../../renderer/files/wish.ts'
+import { folderOf, withKind, type FileWish } from '../../renderer/files/wish.ts'
 
 /** A project that notes what is asked of it, and a person who answers in turn. */
 function desk(...answers: (string | null)[]) {
@@ -55,5 +55,10 @@ describe('names of files', () => {
 
   it('get the extension that was left out, once', () => {
     expect(['a', 'a.PDF', 'a.b'].map((path) => withKind(path, ['pdf']))).toEqual(['a.pdf', 'a.PDF', 'a.b.pdf'])
+  })
+
+  it('stand in their folder, on any system', () => {
+    const paths = ['/a/b/c.pdf', 'C:\\rows\\d.pdf', '/e.pdf', 'C:\\f.pdf', 'g.pdf']
+    expect(paths.map(folderOf)).toEqual(['/a/b', 'C:\\rows', '/', 'C:\\', undefined])
   })
 })
