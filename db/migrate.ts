@@ -3,6 +3,7 @@ import { APPLICATION_ID, type Connection } from './connection.ts'
 import { up as first } from './migrations/0010-first.ts'
 import { up as replace } from './migrations/0020-replace.ts'
 import { up as released } from './migrations/0030-released.ts'
+import { up as collimation } from './migrations/0040-collimation.ts'
 
 export interface Step {
   number: number
@@ -13,6 +14,7 @@ export const STEPS: readonly Step[] = [
   { number: 10, up: first },
   { number: 20, up: replace },
   { number: 30, up: released },
+  { number: 40, up: collimation },
 ]
 
 /** The schema that this version writes. */

@@ -38,6 +38,7 @@ interface RoundRow {
   kind: 'levels' | 'book' | null
   sd_mm_per_sqrt_km: number | null
   sd_mm_per_setup: number | null
+  collimation_mm_per_10_m: number | null
   observer: string | null
   instrument: string | null
   weather: string | null
@@ -72,6 +73,7 @@ export function readStore(db: ReadDb, path: string, readOnly: boolean): OwnReadS
       book: {
         ...(row.sd_mm_per_sqrt_km === null ? {} : { sd_mm_per_sqrt_km: row.sd_mm_per_sqrt_km }),
         ...(row.sd_mm_per_setup === null ? {} : { sd_mm_per_setup: row.sd_mm_per_setup }),
+        ...(row.collimation_mm_per_10_m === null ? {} : { collimation_mm_per_10_m: row.collimation_mm_per_10_m }),
         rows: statement.readings.all(row.key).map((r) => bookRowOf(r as Row)),
       },
     }

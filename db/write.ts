@@ -135,7 +135,8 @@ function freeze(db: WriteDb, key: number, round: DraftRound, who: string, when: 
   writeReadings(db, key, round)
   const { observer, instrument, weather, note } = round
   db.prepare(
-    `UPDATE round SET state = 'accepted', date = ?, kind = ?, sd_mm_per_sqrt_km = ?, sd_mm_per_setup = ?, observer = ?,
+    `UPDATE round SET state = 'accepted', date = ?, kind = ?, sd_mm_per_sqrt_km = ?, sd_mm_per_setup = ?,
+       collimation_mm_per_10_m = ?, observer = ?,
        instrument = ?, weather = ?, note = ?, accepted_at = ?, accepted_by = ?, draft = NULL, saved_at = ?
      WHERE key = ?`,
   ).run(
@@ -143,6 +144,7 @@ function freeze(db: WriteDb, key: number, round: DraftRound, who: string, when: 
     round.book ? 'book' : 'levels',
     round.book?.sd_mm_per_sqrt_km ?? null,
     round.book?.sd_mm_per_setup ?? null,
+    round.book?.collimation_mm_per_10_m ?? null,
     observer ?? null,
     instrument ?? null,
     weather ?? null,

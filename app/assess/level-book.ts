@@ -105,7 +105,7 @@ export function bookView(building: Building, round: Round, options: BookViewOpti
   const book: LevelBook = round.book ?? { rows: [] }
   const { confidence } = criteriaOf(building)
   const z = normalQuantile(0.5 + confidence / 2)
-  const numbered = numberBook({ rows: soundRows(book.rows, round, problems) }, building)
+  const numbered = numberBook({ ...book, rows: soundRows(book.rows, round, problems) }, building)
   const { reduced } = numbered
   for (const row of reduced.before)
     problems.push({ code: 'book.unopened', place: rowPlace(round, row, book.rows[row]!.point) })

@@ -42,17 +42,35 @@ export interface NumberedBook {
   reduced: ReducedBook
 }
 
-export function numberBook(book: Pick<LevelBook, 'rows'>, building: Pick<Building, 'survey'>): NumberedBook {
+/** Readings corrected for the collimation error, where it and the length of the sight are known. */
+export function numberBook(
+  book: Pick<LevelBook, 'rows' | 'collimation_mm_per_10_m'>,
+  building: Pick<Building, 'survey'>,
+): NumberedBook {
   const benchmark = new Map(heldBenchmarks(building).map((b): [string, number] => [b.id, b.level_m]))
   const number = new Map<string, number>()
   const lines = book.rows.map((row): BookLine => {
     if (!number.has(row.point)) number.set(row.point, number.size)
     const { back_m: back, mid_m: mid, fore_m: fore, sight_m: sight, back_sight_m: backSight } = row
-    return { point: number.get(row.point)!, back, mid, fore, sight, backSight }
+    const rise = (book.collimation_mm_per_10_m ?? 0) / 1e4
+    const over = row.fore_m === undefined ? sight : (backSight ?? sight)
+    return {
+      point: number.get(row.point)!,
+      back: level(back, rise, over),
+      mid: level(mid, rise, sight),
+      fore: level(fore, rise, sight),
+      sight,
+      backSight,
+    }
   })
   const ids = [...number.keys()]
   const held = Float64Array.from(ids, (id) => benchmark.get(id) ?? NaN)
   return { ids, held, reduced: reduceBook(lines, held) }
+}
+
+/** What a level sight would have read. */
+function level(reading: number | undefined, rise: number, sight: number | undefined): number | undefined {
+  return reading === undefined || sight === undefined ? reading : reading - rise * sight
 }
 
 /** Variance of one reading in m2; undefined where neither its sight nor an sd for a setup is booked. */

@@ -38,7 +38,12 @@ export interface TypedRound {
   id: string
   date: string
   levels?: readonly object[]
-  book?: { rows: readonly object[]; sd_mm_per_sqrt_km?: unknown; sd_mm_per_setup?: unknown }
+  book?: {
+    rows: readonly object[]
+    sd_mm_per_sqrt_km?: unknown
+    sd_mm_per_setup?: unknown
+    collimation_mm_per_10_m?: unknown
+  }
   observer?: string
   instrument?: string
   weather?: string

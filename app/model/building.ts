@@ -112,6 +112,8 @@ export interface BookRow {
 export interface LevelBook {
   sd_mm_per_sqrt_km?: number
   sd_mm_per_setup?: number
+  /** Collimation error of the instrument, positive where its line of sight rises: readings are corrected by it over their sights. */
+  collimation_mm_per_10_m?: number
   rows: BookRow[]
 }
 

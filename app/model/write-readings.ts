@@ -5,7 +5,7 @@ import type { ReadingColumn } from './pasted-table.ts'
 const OF_LEVELS: readonly ReadingColumn[] = ['round', 'date', 'point', 'level_m', 'sd_mm']
 const OF_BOOKS: readonly ReadingColumn[] = ['round', 'date', 'point', 'back_m', 'mid_m', 'fore_m', 'sight_m']
 
-/** Undefined where there is no round of that kind. A table has no place for an instrument's standard deviation. */
+/** Undefined where there is no round of that kind. A table has no place for what a book says of its instrument. */
 export interface ReadingsTables {
   levels?: string
   books?: string

@@ -3,7 +3,15 @@ import { words, type FaultRecord } from '../../app/model/faults.ts'
 import { cellKey } from './round-cells.ts'
 
 const CELLS = ['point', 'back_m', 'mid_m', 'fore_m', 'sight_m', 'back_sight_m', 'level_m', 'sd_mm']
-const HEAD = ['date', 'observer', 'instrument', 'weather', 'sd_mm_per_sqrt_km', 'sd_mm_per_setup']
+const HEAD = [
+  'date',
+  'observer',
+  'instrument',
+  'weather',
+  'sd_mm_per_sqrt_km',
+  'sd_mm_per_setup',
+  'collimation_mm_per_10_m',
+]
 /** Faults that name a row and no key, by the cell that mends them. */
 const CELL_OF: Record<string, string> = {
   'sight.missing': 'sight_m',

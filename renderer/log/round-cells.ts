@@ -2,7 +2,7 @@
  * A round as it stands in the grid, as text, and what the text says. A draft keeps what was typed: where a cell is
  * no number yet, its text is stored in the number's place, and the core refuses to accept it until it is one.
  */
-import type { BookRow, GivenLevel, Round } from '../../app/model/building.ts'
+import type { BookRow, GivenLevel, LevelBook, Round } from '../../app/model/building.ts'
 import { filled } from '../../app/model/edits/difference.ts'
 import type { FaultRecord } from '../../app/model/faults.ts'
 import { parseNumber } from '../../app/model/numbers.ts'
@@ -18,6 +18,7 @@ export interface HeadText {
   weather: string
   sd_mm_per_sqrt_km: string
   sd_mm_per_setup: string
+  collimation_mm_per_10_m: string
 }
 
 export interface RoundText {
@@ -35,7 +36,7 @@ export interface ReadRound {
   typed: Round
   /** Only rows that say something whole: what is assessed while the rest is being typed. */
   whole: Round
-  /** What is wrong with a cell, by row and key, and with the instrument's sd by its key. */
+  /** What is wrong with a cell, by row and key, and with what is said of the instrument by its key. */
   faults: ReadonlyMap<string, FaultRecord>
 }
 
@@ -47,7 +48,7 @@ const NUMBERS: Record<RoundKind, readonly string[]> = {
 const DECIMALS: Record<string, number> = { back_m: 4, mid_m: 4, fore_m: 4, level_m: 4, sight_m: 1, back_sight_m: 1 }
 /** A staff is never a thousand metres long, so `1,234` on one can only be 1.234. */
 const STAFF: readonly string[] = ['back_m', 'mid_m', 'fore_m']
-const INSTRUMENT = ['sd_mm_per_sqrt_km', 'sd_mm_per_setup'] as const
+const INSTRUMENT = ['sd_mm_per_sqrt_km', 'sd_mm_per_setup', 'collimation_mm_per_10_m'] as const
 const WORDS = ['observer', 'instrument', 'weather'] as const
 
 type StoredRound = Round & Partial<Record<(typeof WORDS)[number], string>>
@@ -70,6 +71,7 @@ export function textOf(round: StoredRound): RoundText {
       weather: round.weather ?? '',
       sd_mm_per_sqrt_km: cellText('sd', round.book?.sd_mm_per_sqrt_km),
       sd_mm_per_setup: cellText('sd', round.book?.sd_mm_per_setup),
+      collimation_mm_per_10_m: cellText('sd', round.book?.collimation_mm_per_10_m),
     },
     rows: rows.map((row) =>
       Object.fromEntries(Object.entries(row).map(([key, value]) => [key, cellText(key, value as number | string)])),
@@ -87,8 +89,8 @@ export function readRound({ id, kind, head, rows }: RoundText): ReadRound {
 
   function round(values: readonly object[], sdOf: (text: Value) => unknown): Round {
     if (kind === 'levels') return { ...start, levels: values as GivenLevel[] }
-    const [sd_mm_per_sqrt_km, sd_mm_per_setup] = sd.map(sdOf) as (number | undefined)[]
-    return { ...start, book: filled({ sd_mm_per_sqrt_km, sd_mm_per_setup, rows: values as BookRow[] }) }
+    const instrument = Object.fromEntries(INSTRUMENT.map((key, i) => [key, sdOf(sd[i]!)])) as Partial<LevelBook>
+    return { ...start, book: filled({ ...instrument, rows: values as BookRow[] }) }
   }
 
   const typed = cells.map((c) => c.typed)

@@ -16,6 +16,7 @@ const PUBLISHED: Record<string, string> = {
   '0010-first.ts': '9ee9ba7705a232084045172428d0a1b516d207c2ab2ccf7af02c97f0d9a2a98b',
   '0020-replace.ts': '2d4e969844498a588a69a65b7b01e5035f013d05f0b56b40e09b999e9b1b6fe4',
   '0030-released.ts': '0352f10b2ff71ae27f52c5e37752be25e9495640a656c4e88ec433939f2274d0',
+  '0040-collimation.ts': '496eebe87af41849c035d51b7733546a5006c142f8b2e8d17e74e2c821d7ac8a',
 }
 
 function schemaText(db: Connection): unknown[] {

@@ -132,7 +132,10 @@ describe('readings tables', () => {
         const before = unmeasured(any)
         if (sdOf) before.survey.rounds = [{ id: 'before', date: '2025-01-01', book: { ...sdOf, rows: [] } }]
         const read = [levels, books].flatMap((text) => (text ? readReadings(text, before).rounds : []))
-        expect(read).toEqual(any.survey.rounds)
+        // A table has no place for the collimation error of an instrument.
+        const booked = structuredClone(any.survey.rounds)
+        for (const { book } of booked) delete book?.collimation_mm_per_10_m
+        expect(read).toEqual(booked)
       }),
     )
   })

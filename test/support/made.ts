@@ -228,6 +228,7 @@ export const anyBuilding: fc.Arbitrary<Building> = shape.chain(({ ending, bays, 
       )
       const points: SurveyPoint[] = [
         { id: 'BM1', kind: 'benchmark', level_m: 12.5 },
+        { id: 'BM2', kind: 'benchmark', level_m: 13, released: 'in doubt: "moved"?' },
         ...supports.map(({ id }): SurveyPoint => ({ id: `S-${id}`, kind: 'stud', support: id })),
       ]
       const surveyed = made.readings.map((readings, i) => round(i, readings, points, made))
@@ -289,7 +290,7 @@ function round(
   { isBook, perSetup }: { isBook: boolean; perSetup: boolean },
 ): Round {
   const head = { id: `R${i}`, date: `2026-0${i + 1}-15` }
-  const studs = points.slice(1)
+  const studs = points.slice(2)
   if (!isBook) {
     const levels = studs.map(({ id }, k) => ({ point: id, level_m: 12 + readings[k]!, sd_mm: 0.3 }))
     return { ...head, levels: [...levels, { point: 'BM1', level_m: 12.5, sd_mm: 0.1 }] }
@@ -301,5 +302,11 @@ function round(
     { point: 'TP1', fore_m: 1.2, back_m: 1.1, ...sight, ...(!perSetup && { back_sight_m: 19 }) },
     { point: 'BM1', fore_m: readings.at(-1)!, ...sight },
   ]
-  return { ...head, book: { ...(perSetup ? { sd_mm_per_setup: 0.3 } : { sd_mm_per_sqrt_km: 0.7 }), rows } }
+  return {
+    ...head,
+    book: {
+      ...(perSetup ? { sd_mm_per_setup: 0.3 } : { sd_mm_per_sqrt_km: 0.7, collimation_mm_per_10_m: -0.4 }),
+      rows,
+    },
+  }
 }

@@ -11,6 +11,7 @@ const HEAD = {
   weather: '',
   sd_mm_per_sqrt_km: '0.7',
   sd_mm_per_setup: '',
+  collimation_mm_per_10_m: '',
 }
 
 function book(...rows: Record<string, string>[]): RoundText {

@@ -16,6 +16,13 @@ const INSTRUMENT: NumberRule = {
   remedy: "Give the instrument's standard deviation in millimetres, above 0.",
 }
 
+/** A level further out is not read with, but mended. */
+const COLLIMATION: NumberRule = {
+  least: -50,
+  most: 50,
+  remedy: 'Give the collimation error in millimetres over 10 m, as a two-peg test gives it.',
+}
+
 interface BookedRow {
   row: BookRow
   path: string
@@ -27,10 +34,11 @@ export function checkBook(
   within: string,
   points: ReadonlyMap<string, SurveyPoint>,
 ): LevelBook | undefined {
-  const book = round.entry('book', ['sd_mm_per_sqrt_km', 'sd_mm_per_setup', 'rows'])
+  const book = round.entry('book', ['sd_mm_per_sqrt_km', 'sd_mm_per_setup', 'collimation_mm_per_10_m', 'rows'])
   if (!book) return undefined
   const sd_mm_per_sqrt_km = book.maybeNumber('sd_mm_per_sqrt_km', INSTRUMENT)
   const sd_mm_per_setup = book.maybeNumber('sd_mm_per_setup', INSTRUMENT)
+  const collimation_mm_per_10_m = book.maybeNumber('collimation_mm_per_10_m', COLLIMATION)
   const hasPerSetup = book.has('sd_mm_per_setup')
   if (!hasPerSetup && !book.has('sd_mm_per_sqrt_km'))
     book.faults.add('book.sdless', {
@@ -44,13 +52,14 @@ export function checkBook(
     const element = { kind: 'row', id: String(booked.length + 1), within } as const
     const entry = Entry.of(book.faults, path, value, KEYS, element)
     const row = entry ? checkRow(entry) : { point: '' }
-    if (entry && !hasPerSetup && book.has('sd_mm_per_sqrt_km')) noteLengthless(entry, row, within)
+    const needsSights = (!hasPerSetup && book.has('sd_mm_per_sqrt_km')) || (collimation_mm_per_10_m ?? 0) !== 0
+    if (entry && needsSights) noteLengthless(entry, row, within)
     booked.push({ row, path, element })
   })
   if (booked.length === 0 && Array.isArray(book.value('rows'))) book.fault('list.empty', 'rows', { of: 'row' })
   noteOrder(book.faults, booked, within)
   noteUnknown(book.faults, booked, points)
-  return filled({ sd_mm_per_sqrt_km, sd_mm_per_setup, rows: booked.map(({ row }) => row) })
+  return filled({ sd_mm_per_sqrt_km, sd_mm_per_setup, collimation_mm_per_10_m, rows: booked.map(({ row }) => row) })
 }
 
 function checkRow(entry: Entry): BookRow {
@@ -70,7 +79,7 @@ function checkRow(entry: Entry): BookRow {
   return row
 }
 
-/** Weights by length need the length of every sight. */
+/** Weights by length, and corrections by it, need the length of every sight. */
 function noteLengthless(entry: Entry, row: BookRow, round: string): void {
   const needsOwn = row.mid_m !== undefined || row.fore_m !== undefined || !entry.has('back_sight_m')
   if (entry.has('sight_m') || !needsOwn || !READINGS.some((key) => entry.has(key))) return

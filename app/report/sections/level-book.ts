@@ -1,7 +1,8 @@
 /** The level book as a surveyor would lay out the page. */
 import type { Content } from 'pdfmake/interfaces.js'
 import { bookView } from '../../assess/level-book.ts'
-import { level, millimetres } from '../../model/numbers.ts'
+import type { LevelBook } from '../../model/building.ts'
+import { fixed, level, millimetres } from '../../model/numbers.ts'
 import type { ReportInput } from '../input.ts'
 import { table } from '../style.ts'
 
@@ -11,7 +12,7 @@ export function levelBook({ building, round }: ReportInput): Content[] {
   return [
     { text: 'Appendix: level book', style: 'heading', headlineLevel: 1, pageBreak: 'before' },
     {
-      text: `Round ${round.id}, ${round.date}. Readings in m as booked; reduced level by height of collimation; adjusted level and its standard deviation from the least-squares adjustment.`,
+      text: `Round ${round.id}, ${round.date}. Readings in m as booked; reduced level by height of collimation; adjusted level and its standard deviation from the least-squares adjustment.${collimation(round.book)}`,
       style: 'body',
     },
     table(
@@ -40,6 +41,11 @@ export function levelBook({ building, round }: ReportInput): Content[] {
       }),
     ),
   ]
+}
+
+function collimation({ collimation_mm_per_10_m: error }: LevelBook): string {
+  if (!error) return ''
+  return ` Reduced from readings corrected over their sights for a collimation error of ${fixed(error, 2)} mm in 10 m (line of sight rising).`
 }
 
 function reading(value: number | undefined): string {
