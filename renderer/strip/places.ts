@@ -35,8 +35,13 @@ export function places(visits: readonly Visit[], width: number): LaidVisit[] {
     one.isDated = one.x - end >= DATE
     if (one.isDated) end = one.x
   }
+  // The latest is always dated, a draft in longer words; those that it would run into make room.
   const latest = laid.at(-1)
-  if (latest && !latest.isDated) latest.isDated = true
+  if (latest) {
+    latest.isDated = true
+    const room = latest.visit.isDraft ? 1.3 * DATE : DATE
+    for (const one of laid.slice(0, -1)) if (latest.x - one.x < room) one.isDated = false
+  }
   return laid
 }
 
