@@ -89,8 +89,8 @@ export function ratio(rad: number): string {
   return `${rad < 0 ? MINUS : ''}1/${n >= 10 ? n.toFixed(0) : n.toPrecision(2).replace(/\.0$/, '')}`
 }
 
-/** A fraction as a percentage: one decimal below 100 %. */
+/** A fraction as a percentage: one decimal below 100 %, its sign kept with the figure. */
 export function percent(fraction: number): string {
   const value = fraction * 100
-  return Number.isFinite(value) ? `${fixed(value, Math.abs(value) < 99.95 ? 1 : 0)}%` : fixed(value, 0)
+  return Number.isFinite(value) ? `${fixed(value, Math.abs(value) < 99.95 ? 1 : 0)}\u00a0%` : fixed(value, 0)
 }

@@ -82,7 +82,8 @@ describe('the condition report of the example', () => {
     expect(negative.length).toBeGreaterThan(5)
     for (const member of members) {
       expect(whole).toContain(momentWithInterval(member.moment_from_kNm, z * member.sd_from_kNm).join(' ± '))
-      if (member.induced_fraction !== undefined) expect(whole).toContain(percent(member.induced_fraction))
+      if (member.induced_fraction !== undefined)
+        expect(whole).toContain(percent(member.induced_fraction).replace('\u00a0', ' '))
     }
     expect(whole).toContain(`\u2212${Math.abs(negative[0]!.moment_from_kNm).toFixed(1)}`)
   })

@@ -51,7 +51,7 @@ describe('the example in the window', () => {
       .frame_lines.flatMap((l) => l.members)
       .find((m) => m.member === 'A4-B4/2')!
     expect(text).toContain(Math.abs(member.moment_to_kNm).toFixed(1))
-    expect(text).toContain(`${(member.induced_fraction! * 100).toFixed(1)}%`)
+    expect(text).toContain(`${(member.induced_fraction! * 100).toFixed(1)}\u00a0%`)
     expect(text).toContain('clear')
   })
 

@@ -109,6 +109,11 @@ describe('a number is written', () => {
   })
 
   test('as a percentage with a decimal below 100', () => {
-    expect([0.1024, 0.9994, 1.234, -0.05].map(percent)).toEqual(['10.2%', '99.9%', '123%', '\u22125.0%'])
+    expect([0.1024, 0.9994, 1.234, -0.05].map(percent)).toEqual([
+      '10.2\u00a0%',
+      '99.9\u00a0%',
+      '123\u00a0%',
+      '\u22125.0\u00a0%',
+    ])
   })
 })

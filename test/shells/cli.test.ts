@@ -34,7 +34,7 @@ describe('levelstead assess', () => {
     const { code, out, error } = bench.run('assess', 'x.levelstead')
     expect([code, error]).toEqual([0, ''])
     expect(out).toMatch(/■ R6 +2026-11-16 +red/)
-    expect(out).toMatch(/■ red +member A4-B4\/2, frame line 4: induced 31\.7 ± 3\.1 kNm, 30\.2% of capacity.*; clear/)
+    expect(out).toMatch(/■ red +member A4-B4\/2, frame line 4: induced 31\.7 ± 3\.1 kNm, 30\.2\s% of capacity.*; clear/)
     for (const caution of [...CAUTIONS, RED_CAUTION]) expect(out).toContain(caution)
   })
 
