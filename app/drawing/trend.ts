@@ -115,20 +115,22 @@ export function trend(input: TrendInput): Scene {
     top,
     bottom,
   }
-  const heading = `${quantity === 'end moment' ? 'induced end moment' : quantity}${series.length === 1 ? ` of ${first!.name}` : ''}, ${kind.unit}`
   const far = triggers.filter((t) => !t.isNear).map((t) => `${t.status} ${kind.words(t.value)}`)
+  const fullHeading = `${quantity === 'end moment' ? 'induced end moment' : quantity}${series.length === 1 ? ` of ${first!.name}` : ''}, ${kind.unit}`
+  const heading = fitText(fullHeading, width * 0.6, SMALL)
+  const room = width - 2 * EDGE - textWidth(heading, SMALL) - 3
   const nearTriggers = triggers
     .filter((t) => t.isNear)
     .map((t) => ({ status: t.status, words: `${t.status} ${kind.words(t.value)}`, at: axes.y(t.value) }))
   const spoken = said.map((p): Point => [axes.x(dayOf(p.date)), axes.y(p.value)])
   const primitives: Primitive[] = [
-    text('text-quiet', [EDGE, baselineFor(EDGE + 2, SMALL)], fitText(heading, width * 0.6, SMALL), SMALL, 'start'),
+    text('text-quiet', [EDGE, baselineFor(EDGE + 2, SMALL)], heading, SMALL, 'start'),
     ...(far.length > 0
       ? [
           text(
             'text-quiet',
             [width - EDGE, baselineFor(EDGE + 2, SMALL)],
-            fitText(`beyond this scale: ${far.join(', ')}`, width * 0.38, SMALL),
+            beyondWords(far.join(', '), room),
             SMALL,
             'end',
           ),
@@ -142,6 +144,12 @@ export function trend(input: TrendInput): Scene {
     ...(series.length > 1 ? endNames(names, kind.role, axes) : []),
   ]
   return { width, height, title, primitives }
+}
+
+/** In as many words as there is room for. */
+function beyondWords(triggers: string, room: number): string {
+  const words = `beyond this scale: ${triggers}`
+  return textWidth(words, SMALL) <= room ? words : fitText(`beyond: ${triggers}`, room, SMALL)
 }
 
 function drawAxes(
