@@ -5,8 +5,9 @@
  *
  *     reading = HI(setup) - level(point) + e,   var(e) given
  *
- * The heights of collimation are eliminated setup by setup (exact); what is left is a system of the points
- * alone, solved for corrections to approximate levels so that no digits are lost.
+ * The heights of collimation are eliminated setup by setup (exact), and so are points that are read once: the
+ * system is that of the points which tie setups together, solved for corrections to approximate levels so that no
+ * digits are lost.
  */
 import { CholeskyDecomposition, Matrix } from 'ml-matrix'
 import { SolverFault, type SurveyArrays } from '../types.ts'
@@ -61,15 +62,23 @@ export function adjustLevels(survey: SurveyArrays): Adjustment {
   const untied = unreached(survey, level)
   if (untied.length) throw new SolverFault('untied', 'point', untied)
 
+  // A point read once carries nothing but itself: it is hung on its setup once the net of the others is solved.
+  const times = new Int32Array(p)
+  for (let i = 0; i < r; i++) times[point[i]!]!++
+  function isSideShot(i: number): boolean {
+    return times[point[i]!] === 1 && Number.isNaN(held[point[i]!]!)
+  }
+  const net = setups.map((members) => members.filter((i) => !isSideShot(i)))
   const unknown = new Int32Array(p).fill(-1)
   let q = 0
-  for (let i = 0; i < r; i++) if (Number.isNaN(held[point[i]!]!) && unknown[point[i]!]! < 0) unknown[point[i]!] = q++
+  for (const members of net)
+    for (const i of members) if (Number.isNaN(held[point[i]!]!) && unknown[point[i]!]! < 0) unknown[point[i]!] = q++
 
   const normal = Matrix.zeros(q, q)
   const right = new Float64Array(q)
-  const weightSum = new Float64Array(setups.length)
-  const meanHeight = new Float64Array(setups.length)
-  setups.forEach((members, s) => {
+  const weightSum = new Float64Array(net.length)
+  const meanHeight = new Float64Array(net.length)
+  net.forEach((members, s) => {
     let sum = 0
     let mean = 0
     for (const i of members) {
@@ -94,20 +103,24 @@ export function adjustLevels(survey: SurveyArrays): Adjustment {
   })
 
   const inverse = inverseFactor(normal)
-  const step = times(inverse, right, q)
-  const factor = new Float64Array(p * q)
+  const step = product(inverse, right, q)
+  const sideShots = setups.map((members) => members.filter(isSideShot))
+  // Columns: the net, then for each setup with side shots its own part of its height, then each side shot's own error.
+  const width = q + sideShots.reduce((sum, shots) => sum + (shots.length ? 1 + shots.length : 0), 0)
+  const factor = new Float64Array(p * width)
   for (let j = 0; j < p; j++) {
     const a = unknown[j]!
     if (a < 0) continue
     level[j]! += step[a]!
-    factor.set(inverse.subarray(a * q, (a + 1) * q), j * q)
+    factor.set(inverse.subarray(a * q, (a + 1) * q), j * width)
   }
 
   const residual = new Float64Array(r)
   const redundancy = new Float64Array(r)
   const standardised = new Float64Array(r)
   let square = 0
-  setups.forEach((members, s) => {
+  let column = q
+  net.forEach((members, s) => {
     const shared = new Float64Array(q)
     let height = meanHeight[s]!
     for (const i of members) {
@@ -121,18 +134,29 @@ export function adjustLevels(survey: SurveyArrays): Adjustment {
       residual[i] = height - level[point[i]!]! - reading[i]!
       square += residual[i]! ** 2 / variance[i]!
       let spread = 1 / weightSum[s]!
-      for (let k = 0; k < q; k++) spread += (shared[k]! - factor[point[i]! * q + k]!) ** 2
+      for (let k = 0; k < q; k++) spread += (shared[k]! - factor[point[i]! * width + k]!) ** 2
       const part = 1 - spread / variance[i]!
       // Below this a redundancy is nothing but rounding.
       redundancy[i] = part > 1e-9 ? part : 0
       if (redundancy[i]) standardised[i] = residual[i]! / Math.sqrt(variance[i]! * part)
     }
+    const shots = sideShots[s]!
+    if (shots.length === 0) return
+    const own = column++
+    for (const i of shots) {
+      const begin = point[i]! * width
+      level[point[i]!] = height - reading[i]!
+      factor.set(shared, begin)
+      factor[begin + own] = Math.sqrt(1 / weightSum[s]!)
+      factor[begin + column++] = Math.sqrt(variance[i]!)
+    }
   })
-  const degreesOfFreedom = r - setups.length - q
+  const readings = net.reduce((sum, members) => sum + members.length, 0)
+  const degreesOfFreedom = readings - net.length - q
   return {
     level,
     factor,
-    q,
+    q: width,
     residual,
     redundancy,
     standardised,
@@ -215,7 +239,7 @@ function symmetric(m: Matrix): Matrix {
 }
 
 /** S S' b */
-function times(factor: Float64Array, b: Float64Array, q: number): Float64Array {
+function product(factor: Float64Array, b: Float64Array, q: number): Float64Array {
   const middle = new Float64Array(q)
   const out = new Float64Array(q)
   for (let i = 0; i < q; i++) for (let k = 0; k < q; k++) middle[k]! += factor[i * q + k]! * b[i]!
