@@ -6,6 +6,7 @@ import { contextOf } from './context.ts'
 export class ThemeState {
   #dark = $state(false)
   #printing = $state(false)
+  #large = $state(false)
 
   constructor(query: MediaQueryList = matchMedia('(prefers-color-scheme: dark)')) {
     this.#dark = query.matches
@@ -13,6 +14,16 @@ export class ThemeState {
     // The page is laid out for print as soon as these have been heard.
     addEventListener('beforeprint', () => flushSync(() => (this.#printing = true)))
     addEventListener('afterprint', () => (this.#printing = false))
+  }
+
+  /** For a screen in the sun, or read from a step away. */
+  get isLarge(): boolean {
+    return this.#large
+  }
+
+  set isLarge(large: boolean) {
+    this.#large = large
+    document.documentElement.classList.toggle('large', large)
   }
 
   get drawing(): Theme {
